@@ -1,0 +1,30 @@
+"""What stands round the bunch: chamber, poles, a cathode, a neutralising background."""
+
+from dataclasses import dataclass
+
+from beamfield.errors import NonsenseError
+
+CHAMBERS = ("round", "elliptic", "plates", "rectangular")
+
+
+@dataclass(frozen=True, slots=True)
+class Chamber:
+    """A conducting wall; half_width is infinite between plates [m]."""
+
+    shape: str
+    half_width: float
+    half_height: float
+
+    def __post_init__(self):
+        if self.shape not in CHAMBERS or not (self.half_width > 0.0 and self.half_height > 0.0):
+            raise NonsenseError(f"no chamber is {self.shape} with half sizes {self.half_width:g} and {self.half_height:g} m")
+
+
+@dataclass(frozen=True, slots=True)
+class Surroundings:
+    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m]; neutralisation, fraction of its charge."""
+
+    chamber: Chamber | None = None
+    pole_half_gap: float | None = None
+    cathode: float | None = None
+    neutralisation: float = 0.0

@@ -1,0 +1,52 @@
+"""One exception tree and one exit code for each kind of ending."""
+
+from dataclasses import dataclass
+from enum import IntEnum
+
+
+class Exit(IntEnum):
+    """What a command returns to the shell."""
+
+    DONE = 0
+    FAULT = 1
+    MISREAD = 2
+    BROKEN = 3
+
+
+@dataclass(frozen=True, slots=True)
+class Fault:
+    """One thing wrong with one place of an input; line and column count from 1, 0 where there is none."""
+
+    message: str
+    key: str = ""
+    line: int = 0
+    column: int = 0
+    file: str = ""
+
+    def __str__(self):
+        place = ":".join(str(part) for part in (self.file, self.line, self.column) if part)
+        return ": ".join(part for part in (place, self.key, self.message) if part)
+
+
+class BeamfieldError(Exception):
+    """Everything that beamfield raises on purpose."""
+
+    exit = Exit.FAULT
+
+
+class InputError(BeamfieldError):
+    """A case, a particle file or a command line that cannot be read; carries every fault found."""
+
+    exit = Exit.MISREAD
+
+    def __init__(self, *faults):
+        self.faults = tuple(fault if isinstance(fault, Fault) else Fault(str(fault)) for fault in faults)
+        super().__init__("\n".join(str(fault) for fault in self.faults))
+
+
+class CallError(InputError, ValueError):
+    """A Python call with arguments that do not fit: shapes, signs, nan, or more memory than there is."""
+
+
+class NonsenseError(InputError, ValueError):
+    """A noun that cannot exist: a negative size, a beam slower than at rest."""
