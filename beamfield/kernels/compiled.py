@@ -1,0 +1,50 @@
+"""The one way to compile a kernel: strict IEEE arithmetic, no lock held, kept on disk where a disk can be written."""
+
+from pathlib import Path
+
+from numba import njit
+from numba.core import event
+
+
+def compiled(parallel=False, inline="never"):
+    """Decorator: njit with error_model="numpy", cached where a cache folder is writable; never fastmath."""
+    options = {"parallel": parallel, "nogil": True, "inline": inline, "error_model": "numpy"}
+
+    def decorate(function):
+        try:
+            return njit(cache=True, **options)(function)
+        except RuntimeError:  # no folder to keep the machine code in
+            return njit(**options)(function)
+
+    return decorate
+
+
+def on_compile(tell):
+    """Call tell() once, when the first kernel is compiled because no kept machine code fits."""
+
+    class Once(event.Listener):
+        def on_start(self, event):
+            nonlocal tell
+            if tell is not None:
+                tell, told = None, tell
+                told()
+
+        def on_end(self, event):
+            pass
+
+    event.register("numba:compile", Once())
+
+
+def _forget_stale():
+    """Drop machine code older than the newest kernel source: numba watches one file, and a kernel may inline another."""
+    folder = Path(__file__).parent
+    newest = max(path.stat().st_mtime for path in folder.glob("*.py"))
+    for index in (folder / "__pycache__").glob("*.nbi"):
+        if index.stat().st_mtime < newest:
+            index.unlink(missing_ok=True)
+
+
+try:
+    _forget_stale()
+except OSError:
+    pass  # a folder that cannot be written cannot be stale either
