@@ -25,7 +25,20 @@ class Fault:
 
     def __str__(self):
         place = ":".join(str(part) for part in (self.file, self.line, self.column) if part)
-        return ": ".join(part for part in (place, self.key, self.message) if part)
+        return one_line(": ".join(part for part in (place, self.key, self.message) if part))
+
+
+def one_line(text):
+    """The text with every line break and control character written out, so that it can neither split nor steer a line."""
+    return "".join(sign if sign.isprintable() else repr(sign)[1:-1] for sign in text)
+
+
+def did_you_mean(word, choices):
+    """'; did you mean ...?' for the nearest of some words, or nothing where none is near."""
+    from difflib import get_close_matches
+
+    near = get_close_matches(word, list(choices), n=1)
+    return f"; did you mean {near[0]!r}?" if near else ""
 
 
 class BeamfieldError(Exception):

@@ -1,0 +1,48 @@
+"""What each command does: read, ask, write, return."""
+
+from beamfield import api
+from beamfield.cli.output import colour, emit, notice
+from beamfield.errors import Exit
+
+
+def report(options):
+    cases = api.load_all(options.cases)
+    outcomes = _evaluate(cases, options)
+    emit(api.report_page(outcomes, options.format, colour(options)), options.output)
+    return _ending(outcomes)
+
+
+def check(options):
+    cases = api.load_all(options.cases)
+    outcomes = _evaluate(cases, options)
+    emit(api.check_page(outcomes, options.format, colour(options)))
+    return _ending(outcomes)
+
+
+def explain(options):
+    emit(api.explain(options.name))
+    return Exit.DONE
+
+
+def new(options):
+    emit(api.starter(options.kind) if options.kind else api.starter(), options.output, fresh=True)
+    return Exit.DONE
+
+
+def schema(_):
+    emit(api.schema_page())
+    return Exit.DONE
+
+
+def version(_):
+    emit(api.version_line())
+    return Exit.DONE
+
+
+def _evaluate(cases, options):
+    api.on_compile(notice)
+    return [api.evaluate(case, options.method) for case in cases]
+
+
+def _ending(outcomes):
+    return Exit.DONE if all(outcome.met for outcome in outcomes) else Exit.BROKEN
