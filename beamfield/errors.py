@@ -29,7 +29,7 @@ class Fault:
 
 
 def one_line(text):
-    """The text with every line break and control character written out, so that it can neither split nor steer a line."""
+    """The text with line breaks and control characters written out: it can neither split nor steer a line."""
     return "".join(sign if sign.isprintable() else repr(sign)[1:-1] for sign in text)
 
 

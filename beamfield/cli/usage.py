@@ -78,7 +78,7 @@ class Parser(argparse.ArgumentParser):
     """Complains in one line, and prints help where pages go."""
 
     def error(self, message):
-        raise InputError(f"{self.prog}: {message}; see '{self.prog} --help'")
+        raise InputError(f"{self.prog}: {message} (see '{self.prog} --help')")
 
     def print_help(self, file=None):
         emit(self.format_help())
@@ -103,11 +103,11 @@ def _help():
 
 def _known(word):
     if not word:
-        raise InputError(f"beamfield: which command? One of {', '.join(COMMANDS)}; see 'beamfield --help'")
+        raise InputError(f"beamfield: which command? One of {', '.join(COMMANDS)} (see 'beamfield --help')")
     if word not in COMMANDS:
         kind = "option" if word.startswith("-") else "command"
         hint = did_you_mean(word, [*COMMANDS, "--help", "--version"])
-        raise InputError(f"beamfield: there is no {kind} {word!r}{hint}; see 'beamfield --help'")
+        raise InputError(f"beamfield: there is no {kind} {word!r}{hint} (see 'beamfield --help')")
     return word
 
 
