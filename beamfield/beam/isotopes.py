@@ -11,30 +11,15 @@ from pathlib import Path
 from beamfield.constants import ATOMIC_MASS, ELECTRON_MASS, ELEMENTARY_CHARGE, SPEED_OF_LIGHT
 from beamfield.errors import NonsenseError
 
-_NAME = re.compile(
-    r"(?P<element>[A-Z][a-z]?)-?(?P<number>\d{1,3})|(?P<number_first>\d{1,3})-?(?P<element_last>[A-Z][a-z]?)"
-)
+_NAME = re.compile(r"([A-Za-z]{1,2})-?([0-9]{1,3})|([0-9]{1,3})-?([A-Za-z]{1,2})")
 
 
 def split_name(word):
-    """Element and mass number of an isotope: ('Ar', 40) for 'Ar-40', 'Ar40' or '40Ar'.
-
-    Raises NonsenseError where the word is not of this form, or names no isotope of the table.
-    """
+    """Element and mass number of an isotope, ('Ar', 40) for 'Ar-40', 'Ar40' or '40Ar'; NonsenseError for any other."""
     found = _NAME.fullmatch(str(word).strip())
     if not found:
-        raise NonsenseError(
-            f"'{word}' is not an isotope; write the element and the mass number, such as 'Ar-40' or '40Ar'"
-        )
-    element = found["element"] or found["element_last"]
-    number = int(found["number"] or found["number_first"])
-    atomic_mass(element, number)
-    return element, number
-
-
-def atomic_number(element):
-    """Protons in the nucleus of an element: 18 for 'Ar'."""
-    return len(ionisation_energies(element))
+        raise NonsenseError(f"'{word}' is no isotope; write the element and the mass number, such as 'Ar-40' or '40Ar'")
+    return (found[1] or found[4]).capitalize(), int(found[2] or found[3])
 
 
 def atomic_mass(element, mass_number):
@@ -47,36 +32,28 @@ def atomic_mass(element, mass_number):
     return known[mass_number]
 
 
-def ionisation_energies(element):
-    """Energies that take one electron after another off the atom [eV], as many as it has electrons."""
-    if element not in _energies():
-        raise NonsenseError(_no_element(element))
-    return _energies()[element]
-
-
 def ion_mass(element, mass_number, charge_state):
     """Mass of an ion at rest.
 
         m = m_atom - n m_e + (sum of the first n ionisation energies) / c^2
 
     element, mass_number  of a neutral atom in the table
-    charge_state          n, electrons taken off; -1 for one electron too many, whose affinity (below 4 eV) is neglected   [1]
+    charge_state          n, electrons taken off; -1 for one too many, its affinity (below 4 eV) neglected  [1]
 
-    returns               m                                                                                              [kg]
-    Raises NonsenseError for a charge state that the atom does not have.
+    returns               m                                                                                 [kg]
+    Raises NonsenseError for an atom not in the table and for a charge state that it does not have.
     Source: energy conservation; atomic masses and ionisation energies as cited in their tables.
     """
-    energies = ionisation_energies(element)
-    _check_charge_state(element, charge_state, len(energies))
-    binding = sum(energies[: max(charge_state, 0)]) * ELEMENTARY_CHARGE / SPEED_OF_LIGHT**2
-    return atomic_mass(element, mass_number) * ATOMIC_MASS - charge_state * ELECTRON_MASS + binding
+    mass = atomic_mass(element, mass_number) * ATOMIC_MASS
+    energies = _energies()[element]
+    if charge_state == 0 or charge_state not in range(-1, len(energies) + 1):
+        raise NonsenseError(_no_charge_state(element, charge_state, len(energies)))
+    binding = sum(energies[: int(max(charge_state, 0))]) * ELEMENTARY_CHARGE / SPEED_OF_LIGHT**2
+    return mass - charge_state * ELECTRON_MASS + binding
 
 
-def _check_charge_state(element, charge_state, most):
-    if charge_state != int(charge_state) or charge_state == 0 or charge_state < -1 or charge_state > most:
-        raise NonsenseError(
-            f"no ion of {element} has charge state {charge_state:g}; give a whole number from 1 to {most} (bare), or -1"
-        )
+def _no_charge_state(element, charge_state, bare):
+    return f"no ion of {element} has charge state {charge_state}; give a whole number from 1 to {bare} (bare), or -1"
 
 
 def _no_element(element):
@@ -89,8 +66,8 @@ def _no_isotope(element, mass_number, known):
     near = sorted(sorted(known, key=lambda number: abs(number - mass_number))[:6])
     names = ", ".join(f"{element}-{number}" for number in near)
     return (
-        f"no {element}-{mass_number} lives 1 us or longer; known near it: {names} (in all {known[0]} to {known[-1]}); "
-        "give mass and charge_state instead"
+        f"no {element}-{mass_number} that lives 1 us or longer is known; near it are {names} "
+        f"({element}-{known[0]} to {element}-{known[-1]} in all); or give mass and charge_state instead"
     )
 
 

