@@ -70,7 +70,7 @@ def test_bare_nuclei(ion):
 
 @pytest.mark.parametrize("ion", CARBON_IONS)
 def test_carbon_ions(ion):
-    """From memory of weighings in traps: carbon weighs 12 u by definition, so electrons and binding alone are tested."""
+    """From memory of weighings in traps: carbon weighs 12 u by definition, so only electrons and binding are tested."""
     two_mev_of_binding = 2e-12
     assert isotope(*ion).mass / ATOMIC_MASS == pytest.approx(CARBON_IONS[ion], abs=two_mev_of_binding)
 
