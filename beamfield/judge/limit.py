@@ -36,4 +36,6 @@ def judge(limit, value):
     """Verdict on one limit for the value of its result."""
     value = abs(value) if limit.absolute else value
     room = (limit.bound - value) if limit.comparison[0] == "<" else (value - limit.bound)
-    return Verdict(limit, value, bool(COMPARISONS[limit.comparison](value, limit.bound)), room / (abs(limit.bound) or 1.0))
+    return Verdict(
+        limit, value, bool(COMPARISONS[limit.comparison](value, limit.bound)), room / (abs(limit.bound) or 1.0)
+    )
