@@ -81,7 +81,7 @@ def _mute():
 
 
 def _to_file(page, path):
-    target = path.resolve()
+    target = Path(os.path.realpath(path))
     if target.exists() and not target.is_file():
         return _write(page, target)
     part = target.with_name(f".{target.name}.{os.getpid()}.part")
