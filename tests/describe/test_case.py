@@ -92,7 +92,7 @@ def test_no_such_file(tmp_path, name):
 def test_a_file_too_large(tmp_path):
     path = tmp_path / "large.yaml"
     path.write_bytes(b"#" * 1_000_001)
-    with pytest.raises(InputError, match="at most 1000000"):
+    with pytest.raises(InputError, match="larger than 1000000 bytes"):
         load(path)
 
 
