@@ -4,7 +4,7 @@ from beamfield import api
 from beamfield.cli.output import colour, emit, notice
 from beamfield.errors import Exit
 
-COMPILING = "compiling the kernels, once for this machine; this takes some 20 seconds"
+COMPILING = "compiling the kernels, once for this machine: up to 20 seconds"
 
 
 def report(options):
