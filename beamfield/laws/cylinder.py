@@ -44,11 +44,10 @@ def uniform_cylinder_gradient(half_axes):
     towards psi: every term positive. For a round section d = a and all three are elementary.
     """
     a, b, length = half_axes
-    psi = azimuths(a, b)
-    d2 = (a * np.cos(psi)) ** 2 + (b * np.sin(psi)) ** 2
+    cos2, sin2, d2, share = azimuths(a, b)
     reach = np.sqrt(d2 + length**2)
-    terms = np.cos(psi) ** 2 / (d2 * reach), np.sin(psi) ** 2 / (d2 * reach), 1.0 / (length * reach * (reach + length))
-    return 2.0 * np.mean(terms, axis=1)
+    terms = cos2 / (d2 * reach), sin2 / (d2 * reach), 1.0 / (length * reach * (reach + length))
+    return 2.0 * np.array(terms) @ share
 
 
 def uniform_cylinder_axis_field(z, half_axes):
@@ -60,17 +59,23 @@ def uniform_cylinder_axis_field(z, half_axes):
     """
     a, b, length = half_axes
     z = np.asarray(z, dtype=float)[:, None]
-    psi = azimuths(a, b)
-    d2 = (a * np.cos(psi)) ** 2 + (b * np.sin(psi)) ** 2
+    _, _, d2, share = azimuths(a, b)
     near, far = np.abs(length - z), np.abs(length + z)
     r_near, r_far = np.sqrt(d2 + near**2), np.sqrt(d2 + far**2)
     gain = 4.0 * length * z / (r_near + r_far) + 2.0 * np.clip(z, -length, length)
-    return np.mean(gain / ((r_near + near) * (r_far + far)), axis=1) / length
+    return (gain / ((r_near + near) * (r_far + far))) @ share / length
 
 
 def azimuths(a, b):
-    """Angles psi (K,) round the turn, enough for a mean over the half width of an ellipse of half axes a, b."""
-    return 2.0 * np.pi * np.arange(count := 80 * int(np.ceil(max(a / b, b / a)))) / count
+    """cos^2, sin^2, the squared half width d^2 [m^2] of an ellipse of half axes a, b towards angles psi (K,), and the
+    shares (K,) of these in a mean round the turn: tan psi = sqrt(a/b) tan theta spreads sides and ends evenly.
+    """
+    stretch = np.sqrt(a / b)
+    theta = 2.0 * np.pi * np.arange(count := 80 * int(np.ceil(max(stretch, 1.0 / stretch)))) / count
+    cos2 = np.cos(theta) ** 2
+    sin2 = (stretch * np.sin(theta)) ** 2
+    cos2, sin2 = cos2 / (cos2 + sin2), sin2 / (cos2 + sin2)
+    return cos2, sin2, a * a * cos2 + b * b * sin2, _slope(theta, stretch) / count
 
 
 def _settled(points, half_axes):

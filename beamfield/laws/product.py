@@ -46,9 +46,10 @@ def section_density(transverse, across, s):
     a, b = across
     if transverse == "gaussian":
         return 1.0 / np.sqrt((a * a + s) * (b * b + s))
-    v = _directions(a, b)[2] / (2.0 * s[:, None])
+    _, _, d2, share = azimuths(a, b)
+    v = d2 / (2.0 * s[:, None])
     flat = -np.expm1(-v) / v
-    return np.mean(flat if transverse == "kv" else 2.0 * (flat - _rising(v)), axis=1) / s
+    return (flat if transverse == "kv" else 2.0 * (flat - _rising(v))) @ share / s
 
 
 def section_curvature(transverse, across, s):
@@ -56,10 +57,10 @@ def section_curvature(transverse, across, s):
     a, b = across
     if transverse == "gaussian":
         return section_density(transverse, across, s) / np.array([a * a + s, b * b + s])
-    cos2, sin2, d2 = _directions(a, b)
+    cos2, sin2, d2, share = azimuths(a, b)
     v = d2 / (2.0 * s[:, None])
     weight = 2.0 * np.exp(-v) if transverse == "kv" else 4.0 * _rising(v)
-    return np.array([np.mean(cos2 * weight, axis=1), np.mean(sin2 * weight, axis=1)]) / s**2
+    return np.array([weight @ (cos2 * share), weight @ (sin2 * share)]) / s**2
 
 
 def _gaussian_section(points, across, longitudinal, half):
@@ -75,13 +76,6 @@ def _gaussian_section(points, across, longitudinal, half):
 def _variances(across, half, farthest=0.0):
     """Variances s (K,) [m^2] of the smoothing, for points no farther from the centre than `farthest` [m]."""
     return lattice(min(*across, half) ** 2, max(*across, half, farthest) ** 2, _BELOW)
-
-
-def _directions(a, b):
-    """cos^2, sin^2 and the squared half width d^2 [m^2] of the ellipse round the turn."""
-    psi = azimuths(a, b)
-    cos2, sin2 = np.cos(psi) ** 2, np.sin(psi) ** 2
-    return cos2, sin2, a * a * cos2 + b * b * sin2
 
 
 def _rising(v):
