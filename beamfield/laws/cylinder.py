@@ -71,7 +71,7 @@ def azimuths(a, b):
     shares (K,) of these in a mean round the turn: tan psi = sqrt(a/b) tan theta spreads sides and ends evenly.
     """
     stretch = np.sqrt(a / b)
-    theta = 2.0 * np.pi * np.arange(count := 80 * int(np.ceil(max(stretch, 1.0 / stretch)))) / count
+    theta = 2.0 * np.pi * np.arange(count := 40 * int(np.ceil(max(stretch, 1.0 / stretch)))) / count
     cos2 = np.cos(theta) ** 2
     sin2 = (stretch * np.sin(theta)) ** 2
     cos2, sin2 = cos2 / (cos2 + sin2), sin2 / (cos2 + sin2)
