@@ -7,7 +7,7 @@ from math import pi, sqrt
 import numpy as np
 
 from beamfield.constants import COULOMB
-from beamfield.estimate.probe_rule import azimuth_nodes, height_nodes, ray_rule, rule_for, unit_nodes
+from beamfield.estimate.probe_rule import azimuth_nodes, height_nodes, ray_nodes, ray_rule, rule_for, unit_nodes
 from beamfield.estimate.textbook import filling, rest_scales
 
 COARSER = 7.0 / 8.0  # nodes of the coarser rule in each direction: its error stands for the doubt, and covers it
@@ -96,6 +96,6 @@ def _of_ellipsoid(bunch, rule, probes, scales):
             probe_cone.cone_field(part, scales, degree, rule.azimuth, *nodes, bunch.gamma, found)
         else:
             azimuth = azimuth_nodes(part, scales, rule.azimuth, edged=True)
-            probe_rays.ray_field(part, scales, degree, *azimuth, *height_nodes(rule), bunch.gamma, found)
+            probe_rays.ray_field(part, scales, degree, *azimuth, *ray_nodes(rule), bunch.gamma, found)
         out[:, chosen] = found
     return out

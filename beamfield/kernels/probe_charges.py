@@ -54,7 +54,7 @@ def spread(x, inside, pancake):
 
 
 @compiled()
-def column(x, y, z, rho, c, top, weight, along, endless, paired, w_paired, single, w_single, gamma):
+def column(x, y, z, rho, c, top, weight, along, endless, many, w_many, few, w_few, gamma):
     """Sum over the charges that stand above and below one place (x, y) from a probe at height z."""
     u = math.sqrt((gamma - 1.0) * (gamma + 1.0))
     ex = ey = ez = 0.0
@@ -66,10 +66,9 @@ def column(x, y, z, rho, c, top, weight, along, endless, paired, w_paired, singl
         if along == GAUSSIAN:
             inner = outer
     for part in range(2):
-        if part == 0:
-            low, high, nodes, weights, signs = 0.0, inner, paired, w_paired, 2
-        else:
-            low, high, nodes, weights, signs = abs(inner), outer, single, w_single, 1
+        low, high, signs = (0.0, inner, 2) if part == 0 else (abs(inner), outer, 1)
+        longer = (part == 0) == (inner >= 0.5 * outer)
+        nodes, weights = (many, w_many) if longer else (few, w_few)
         if high <= low:
             continue
         for k in range(nodes.shape[0]):
@@ -89,7 +88,7 @@ def column(x, y, z, rho, c, top, weight, along, endless, paired, w_paired, singl
 
 @compiled(parallel=True)
 def probe_field(
-    probes, scales, kinds, window, azimuth, w_azimuth, radial, w_radial, paired, w_paired, single, w_single, gamma, out
+    probes, scales, kinds, window, azimuth, w_azimuth, radial, w_radial, many, w_many, few, w_few, gamma, out
 ):
     """Fill out (3, M) with lab E / gamma at probes (3, M), given in the frame of the bunch, per unit central density.
 
@@ -107,7 +106,7 @@ def probe_field(
         inside = d2 < edge2
         pancake = c * c < a * b
         top = c * (window if along == GAUSSIAN else 1.0)
-        near = max(abs(c - abs(z)), 0.05 * c) if along == FLAT else c
+        near = max(abs(c - abs(z)), 0.15 * c) if along == FLAT else c
         ex = ey = ez = 0.0
         for i in range(azimuth.shape[2]):
             cos, sin = azimuth[m, 0, i], azimuth[m, 1, i]
@@ -136,10 +135,10 @@ def probe_field(
                         weight,
                         along,
                         2.0 * window,
-                        paired,
-                        w_paired,
-                        single,
-                        w_single,
+                        many,
+                        w_many,
+                        few,
+                        w_few,
                         gamma,
                     )
                     ex += fx
