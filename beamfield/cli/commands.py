@@ -4,6 +4,8 @@ from beamfield import api
 from beamfield.cli.output import colour, emit, notice
 from beamfield.errors import Exit
 
+COMPILING = "compiling the kernels, once for this machine; this takes some 20 seconds"
+
 
 def report(options):
     cases = api.load_all(options.cases)
@@ -25,7 +27,7 @@ def explain(options):
 
 
 def new(options):
-    emit(api.starter(options.kind) if options.kind else api.starter(), options.output, fresh=True)
+    emit(api.starter(options.kind), options.output, fresh=True)
     return Exit.DONE
 
 
@@ -40,7 +42,7 @@ def version(_):
 
 
 def _evaluate(cases, options):
-    api.on_compile(notice)
+    api.on_compile(lambda: notice(COMPILING))
     return [api.evaluate(case, options.method) for case in cases]
 
 

@@ -7,7 +7,7 @@ from beamfield.estimate.entries_bunch import BUNCH
 from beamfield.estimate.entries_domain import DOMAIN
 from beamfield.estimate.entries_effect import EFFECT
 from beamfield.estimate.entries_strength import STRENGTH
-from beamfield.estimate.entry import QUESTIONS, Entry
+from beamfield.estimate.catalogue_entry import QUESTIONS, Entry
 
 __all__ = ["CATALOGUE", "QUESTIONS", "Entry"]
 

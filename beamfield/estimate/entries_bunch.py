@@ -1,6 +1,6 @@
 """Results that say what the bunch is."""
 
-from beamfield.estimate.entry import Entry
+from beamfield.estimate.catalogue_entry import Entry
 
 _MECHANICS = "special relativity: L. D. Landau and E. M. Lifshitz, The Classical Theory of Fields, 1975, sec. 9 (from memory of it)"
 _CURRENT = "definition of current and line density; common practice, no source"

@@ -1,6 +1,6 @@
 """Results that say where the estimate holds."""
 
-from beamfield.estimate.entry import Entry
+from beamfield.estimate.catalogue_entry import Entry
 
 _RETARDED = (
     "geometry of the retarded time, A. Lienard, L'Eclairage electrique 16, 1898, E. Wiechert, Arch. neerl. 5, 1900 (from "

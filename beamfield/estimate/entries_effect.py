@@ -1,6 +1,6 @@
 """Results that say what the field does to the beam."""
 
-from beamfield.estimate.entry import Entry, along
+from beamfield.estimate.catalogue_entry import Entry, along
 
 _NEWTON = (
     "Newton's second law with the magnetic force of the co-moving field, q E / gamma^2 (common practice, no source); "

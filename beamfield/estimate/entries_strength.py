@@ -1,6 +1,6 @@
 """Results that say how strong the field of the bunch is."""
 
-from beamfield.estimate.entry import Entry, along
+from beamfield.estimate.catalogue_entry import Entry, along
 
 _COULOMB = (
     "superposition of moving charges, O. Heaviside, On the electromagnetic effects due to the motion of electrification "

@@ -35,5 +35,6 @@ class Verdict:
 def judge(limit, value):
     """Verdict on one limit for the value of its result."""
     value = abs(value) if limit.absolute else value
-    room = (limit.bound - value) if limit.comparison[0] == "<" else (value - limit.bound)
-    return Verdict(limit, value, bool(COMPARISONS[limit.comparison](value, limit.bound)), room / (abs(limit.bound) or 1.0))
+    room = limit.bound - value if limit.comparison[0] == "<" else value - limit.bound
+    met = bool(COMPARISONS[limit.comparison](value, limit.bound))
+    return Verdict(limit, value, met, room / (abs(limit.bound) or 1.0))

@@ -2,6 +2,7 @@
 
 from dataclasses import dataclass
 
+from beamfield.beam.bunch import Bunch
 from beamfield.estimate.finding import Finding
 from beamfield.judge.limit import Verdict
 
@@ -9,7 +10,7 @@ from beamfield.judge.limit import Verdict
 @dataclass(frozen=True, slots=True)
 class Outcome:
     """title and file of the case; findings by name, in the order of the catalogue; verdicts in the order of the limits;
-    warnings about the case as a whole; checks, the tool's self-checks as (sentence, passed)."""
+    warnings about the case as a whole; checks, the tool's self-checks as (sentence, passed); the bunch itself."""
 
     title: str
     file: str
@@ -17,6 +18,7 @@ class Outcome:
     verdicts: tuple[Verdict, ...] = ()
     warnings: tuple[str, ...] = ()
     checks: tuple[tuple[str, bool], ...] = ()
+    bunch: Bunch | None = None
 
     def __getitem__(self, name):
         return self.findings[name]
