@@ -13,9 +13,9 @@ __all__ += ["report_page", "schema", "schema_page", "starter", "superpose", "ver
 
 def load(path):
     """Case in the file at `path`, checked; InputError with every fault found."""
-    from beamfield.describe.case import read_case
+    from beamfield.describe import case
 
-    return read_case(path)
+    return case.load(path)
 
 
 def load_all(paths):

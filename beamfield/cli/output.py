@@ -63,7 +63,7 @@ def _send(page, stream):
     if _is_terminal(stream):
         stream.write(_legible(page, stream.encoding))
     else:
-        stream.buffer.write(page.encode("utf-8"))
+        stream.buffer.write(page.encode("utf-8", "backslashreplace"))
     stream.flush()
 
 
@@ -81,7 +81,7 @@ def _mute():
 
 
 def _to_file(page, path):
-    target = path.resolve()
+    target = Path(os.path.realpath(path))
     if target.exists() and not target.is_file():
         return _write(page, target)
     part = target.with_name(f".{target.name}.{os.getpid()}.part")
@@ -93,4 +93,4 @@ def _to_file(page, path):
 
 
 def _write(page, path):
-    path.write_text(page, encoding="utf-8", newline="\n")
+    path.write_bytes(page.encode("utf-8", "backslashreplace"))

@@ -1,0 +1,132 @@
+"""Charges placed for each probe: the field of a bunch known as a density, as a sum of moving charges round the probe.
+
+In the frame of the bunch a charge stands at (rho cos phi, rho sin phi, rho sinh zeta) from the probe and carries the charge
+of its cell, n rho^2 cosh(zeta) drho dphi dzeta. The inverse square of its field and the size of its cell cancel: there is
+nothing to soften and no bias. Between the limits chosen here the density is smooth, so that Gauss nodes converge fast:
+
+    phi    even in the angle that an elliptic section asks for; only directions that meet the bunch
+    rho    from where a ray enters the elliptic cylinder about the bunch to where it leaves it, even in asinh(rho / near):
+           `near` is how far along z the density is the same; the logarithm at the probe is mapped away
+    zeta   in pairs above and below the probe as far as both reach, then the rest of the longer side
+"""
+
+import math
+
+import numpy as np
+from numba import prange
+
+from beamfield.kernels.compiled import compiled
+from beamfield.kernels.moving_charge import one_charge
+
+GAUSSIAN, FLAT, PARABOLIC, COASTING = 0, 1, 2, 3
+WINDOW = 6.0  # rms lengths of a Gaussian that are kept
+ENDLESS = 11.0  # zeta beyond which the charges of a coasting beam add less than 1e-9
+
+
+@compiled(inline="always")
+def profile(kind, t):
+    """Density profile against t = (x/a)^2: exp(-t/2) of a Gaussian, 1 or 1 - t inside an edge."""
+    if kind == GAUSSIAN:
+        return math.exp(-0.5 * t)
+    if kind == PARABOLIC:
+        return max(0.0, 1.0 - t)
+    return 1.0
+
+
+@compiled(inline="always")
+def chord(px, py, cos, sin, edge2):
+    """Where a ray from (px, py) enters and leaves the circle of radius^2 edge2; (0, 0) when it never does."""
+    middle = -(px * cos + py * sin)
+    half2 = edge2 - px * px - py * py + middle * middle
+    if half2 <= 0.0:
+        return 0.0, 0.0
+    half = math.sqrt(half2)
+    return max(0.0, middle - half), max(0.0, middle + half)
+
+
+@compiled(inline="always")
+def spread(x, inside, pancake):
+    """Node x of (0, 1) and its stretch: crowded at a probe inside the bunch, and at the far end too in a pancake."""
+    if not inside:
+        return x, 1.0
+    if pancake:
+        return x * x * (3.0 - 2.0 * x), 6.0 * x * (1.0 - x)
+    return x * x, 2.0 * x
+
+
+@compiled()
+def column(x, y, z, rho, c, top, weight, along, paired, w_paired, single, w_single, gamma):
+    """Sum over the charges that stand above and below one place (x, y) from a probe at height z."""
+    u = math.sqrt((gamma - 1.0) * (gamma + 1.0))
+    ex = ey = ez = 0.0
+    if along == COASTING:
+        inner, outer, side = ENDLESS, ENDLESS, 1.0
+    else:
+        inner, outer = math.asinh((top - abs(z)) / rho), math.asinh((top + abs(z)) / rho)
+        side = -1.0 if z > 0.0 else 1.0
+        if along == GAUSSIAN:
+            inner = outer
+    for part in range(2):
+        if part == 0:
+            low, high, nodes, weights, signs = 0.0, inner, paired, w_paired, 2
+        else:
+            low, high, nodes, weights, signs = abs(inner), outer, single, w_single, 1
+        if high <= low:
+            continue
+        for k in range(nodes.shape[0]):
+            grow = math.exp(low + (high - low) * nodes[k])
+            height = 0.5 * rho * (grow - 1.0 / grow)
+            cell = weight * 0.5 * rho * (grow + 1.0 / grow) * (high - low) * weights[k]
+            for s in range(signs):
+                dz = side * height if s == 0 else -side * height
+                place = (z + dz) / c
+                charge = cell * profile(along, place * place)
+                fx, fy, fz = one_charge(-x, -y, -dz / gamma, 0.0, 0.0, u, 0.0)
+                ex += charge * fx
+                ey += charge * fy
+                ez += charge * fz
+    return ex, ey, ez
+
+
+@compiled(parallel=True)
+def probe_field(probes, scales, kinds, azimuth, w_azimuth, radial, w_radial, paired, w_paired, single, w_single, gamma, out):
+    """Fill out (3, M) with lab E / gamma at probes (3, M), given in the frame of the bunch, per unit central density.
+
+    scales (a, b, c), kinds (across, along): the density is profile(x2/a2 + y2/b2) profile(z2/c2);
+    azimuth (M, 2, K) and w_azimuth (M, K), directions for each probe in units of a and b; other nodes on (0, 1).
+    """
+    a, b, c = scales
+    across, along = kinds
+    edge2 = WINDOW * WINDOW if across == GAUSSIAN else 1.0
+    for m in prange(probes.shape[1]):
+        px, py, z = probes[0, m] / a, probes[1, m] / b, probes[2, m]
+        d2 = px * px + py * py
+        inside = d2 < edge2
+        pancake = c * c < a * b
+        top = c * (WINDOW if along == GAUSSIAN else 1.0)
+        near = max(abs(c - abs(z)), 0.05 * c) if along == FLAT else c
+        ex = ey = ez = 0.0
+        for i in range(azimuth.shape[2]):
+            cos, sin = azimuth[m, 0, i], azimuth[m, 1, i]
+            stretch = math.hypot(a * cos, b * sin)
+            enter, leave = chord(px, py, cos, sin, edge2)
+            if leave <= enter:
+                continue
+            scale = near / stretch
+            first, last = math.asinh(enter / scale), math.asinh(leave / scale)
+            for j in range(radial.shape[0]):
+                v, dv = spread(radial[j], inside, pancake)
+                w = first + (last - first) * v
+                r = scale * math.sinh(w)
+                dr = scale * math.cosh(w) * (last - first) * dv * w_radial[j]
+                qx, qy = px + r * cos, py + r * sin
+                weight = profile(across, qx * qx + qy * qy) * a * b * r * dr * w_azimuth[m, i]
+                if weight > 0.0:
+                    x, y = r * a * cos, r * b * sin
+                    fx, fy, fz = column(
+                        x, y, z, r * stretch, c, top, weight, along, paired, w_paired, single, w_single, gamma
+                    )
+                    ex += fx
+                    ey += fy
+                    ez += fz
+        out[0, m], out[1, m], out[2, m] = ex, ey, ez
