@@ -2,7 +2,6 @@
 
 from collections.abc import Iterator
 from dataclasses import dataclass
-from itertools import chain
 
 import numpy as np
 
@@ -39,10 +38,9 @@ def field_blocks(evaluate, grid, block=BLOCK):
 
 
 def field_map(title, evaluate, grid, block=BLOCK):
-    """FieldMap of whatever `evaluate` gives; the first block is evaluated at once, to see what that is."""
-    blocks = field_blocks(evaluate, grid, block)
-    head = next(blocks)
-    return FieldMap(title, grid, tuple(MAPPED[name] for name in head.values), chain([head], blocks))
+    """FieldMap of whatever `evaluate` gives; the first point is evaluated at once, to see what that is."""
+    quantities = tuple(MAPPED[name] for name in evaluate(grid.points(0, 1)))
+    return FieldMap(title, grid, quantities, field_blocks(evaluate, grid, block))
 
 
 def co_moving(field, charge, beta_gamma, phi=None):

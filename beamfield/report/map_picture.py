@@ -27,6 +27,12 @@ def write(path, field_map):
         figure.savefig(path, format="png", dpi=DOTS, metadata={"Software": None})
 
 
+def _scaled(values, unit):
+    """Divisor of an axis and its label: 'MV/m', '1e-14 N'."""
+    fit = scale(float(np.abs(values).max()), unit)
+    return fit.factor * 10.0**fit.power, (f"1e{fit.power} " if fit.power else "") + fit.unit
+
+
 def _sheet(rows, columns, width, height):
     from matplotlib.figure import Figure  # no windows, no global state
 
@@ -39,16 +45,16 @@ def _curves(field_map):
     (pick,) = picked(field_map, most=4000)
     figure, panels = _sheet(len(field_map.quantities), 1, 7.5, 1.9)
     axis = pick.axes[0]
-    at = scale(np.abs(pick.places[axis]).max(), "m")
+    step, metres = _scaled(pick.places[axis], "m")
     for panel, mapped in zip(panels[:, 0], field_map.quantities):
         values = np.atleast_2d(pick.values[mapped.name])
-        fit = scale(np.abs(values).max(), mapped.unit)
+        divisor, unit = _scaled(values, mapped.unit)
         for row, column, colour, style in zip(values, mapped.columns, LINES, STYLES):
-            panel.plot(pick.places[axis] / at.factor, row / fit.factor, style, color=colour, label=column)
-        panel.set_ylabel(f"{mapped.name} [{fit.unit}]")
+            panel.plot(pick.places[axis] / step, row / divisor, style, color=colour, label=column)
+        panel.set_ylabel(f"{mapped.name} [{unit}]")
         panel.grid(color="0.92")
         panel.legend(frameon=False, loc="center left", bbox_to_anchor=(1.0, 0.5))
-    panels[-1, 0].set_xlabel(f"{'xyz'[axis]} [{at.unit}]")
+    panels[-1, 0].set_xlabel(f"{'xyz'[axis]} [{metres}]")
     return figure
 
 
@@ -65,12 +71,12 @@ def _planes(field_map):
 
 def _plane(figure, panel, pick, mapped):
     across, up = pick.axes
-    at = [scale(np.abs(pick.places[axis]).max(), "m") for axis in pick.axes]
-    places = [pick.places[axis] / fit.factor for axis, fit in zip(pick.axes, at)]
+    steps, metres = zip(*(_scaled(pick.places[axis], "m") for axis in pick.axes))
+    places = [pick.places[axis] / step for axis, step in zip(pick.axes, steps)]
     size = np.linalg.norm(pick.values[mapped.name], axis=0).reshape(len(places[1]), len(places[0]))
-    fit = scale(size.max(), mapped.unit)
-    shades = panel.pcolormesh(*places, size / fit.factor, cmap="cividis", shading="nearest", rasterized=True)
-    figure.colorbar(shades, ax=panel, label=f"|{mapped.name}| [{fit.unit}]")
+    divisor, unit = _scaled(size, mapped.unit)
+    shades = panel.pcolormesh(*places, size / divisor, cmap="cividis", shading="nearest", rasterized=True)
+    figure.colorbar(shades, ax=panel, label=f"|{mapped.name}| [{unit}]")
     if "phi" in pick.values and np.ptp(pick.values["phi"]) > 0.0:
         panel.contour(*places, pick.values["phi"].reshape(size.shape), 9, colors="white", linewidths=0.6, alpha=0.7)
-    panel.set(xlabel=f"{'xyz'[across]} [{at[0].unit}]", ylabel=f"{'xyz'[up]} [{at[1].unit}]", title=pick.where)
+    panel.set(xlabel=f"{'xyz'[across]} [{metres[0]}]", ylabel=f"{'xyz'[up]} [{metres[1]}]", title=pick.where)
