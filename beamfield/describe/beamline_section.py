@@ -44,7 +44,7 @@ def _start(reading):
     """Start, the word 'matched', or None where a fault has been said."""
     if _START not in reading:
         return Start((None, None))
-    if not isinstance(reading.nodes[_START], Mapping):
+    if not isinstance(reading.nodes.get(_START), Mapping):
         return reading.word(_START)
     betas = [reading.si(f"{_START}.beta_{axis}") for axis in "xy"]
     alphas = [reading.si(f"{_START}.alpha_{axis}", absent=0.0) for axis in "xy"]

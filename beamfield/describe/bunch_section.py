@@ -42,17 +42,16 @@ def _velocity(beta_gamma):
 
 
 def _of_particles(reading, particles):
-    for axis in "xyz":
-        if f"bunch.size.{axis}" in reading:
-            reading.fault(f"bunch.size.{axis}", "the sizes are those of the particle file; leave it out")
+    for key in reading.written("bunch.size.x", "bunch.size.y", _LENGTH):
+        reading.fault(key, "the sizes are those of the particle file; leave it out")
     return tuple(float(size) for size in particles.rms)
 
 
 def _length(reading, shape, beta_gamma):
     """Rms length [m]; inf of a coasting beam."""
     if shape and shape.coasting:
-        if _LENGTH in reading:
-            reading.fault(_LENGTH, "a coasting beam has no length; leave it out, or choose another longitudinal shape")
+        for key in reading.written(_LENGTH):
+            reading.fault(key, "a coasting beam has no length; leave it out, or choose another longitudinal shape")
         return inf
     if shape and _LENGTH not in reading:
         return reading.fault(_LENGTH, "is missing; write 'z: 120 ns rms', or 'z: 0.3 m rms' (or semi, full, fwhm)")
@@ -83,9 +82,8 @@ def _filling(reading, species, velocity, form, length, ring):
 
 
 def _check_repetition(reading, quantity):
-    if _REPETITION not in reading:
-        return
-    if "ring" in reading:
-        reading.fault(_REPETITION, "the ring already says how often a bunch passes; leave it out")
-    elif quantity and "mean" not in quantity.words:
-        reading.warn(_REPETITION, "is not needed: only a mean current uses it")
+    for key in reading.written(_REPETITION):
+        if "ring" in reading:
+            reading.fault(key, "the ring already says how often a bunch passes; leave it out")
+        elif quantity and "mean" not in quantity.words:
+            reading.warn(key, "is not needed: only a mean current uses it")

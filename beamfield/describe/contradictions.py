@@ -26,14 +26,11 @@ def _reach(bunch, axis, tail):
 def _fits_chamber(reading, bunch, chamber):
     if chamber is None:
         return
-    for axis, wall, name in ((0, chamber.half_width, "wide"), (1, chamber.half_height, "high")):
+    for axis, wall, name in ((0, chamber.half_width, "horizontally"), (1, chamber.half_height, "vertically")):
         reach, called = _reach(bunch, axis, _TAIL_ACROSS)
         if not reach < wall:
-            reading.fault(
-                _CHAMBER,
-                f"the beam does not fit: {called} is {reach * 1e3:.4g} mm from the axis, the wall {wall * 1e3:.4g} mm "
-                f"(half {name})",
-            )
+            sides = f"{called} is {reach * 1e3:.4g} mm from the axis, the wall {wall * 1e3:.4g} mm"
+            reading.fault(_CHAMBER, f"the beam does not fit: {name} {sides}")
 
 
 def _has_poles_outside(reading, surroundings):
@@ -49,7 +46,7 @@ def _stands_before_cathode(reading, bunch, distance):
         return reading.fault(_CATHODE, "a coasting beam has no centre for a cathode to stand behind")
     reach, called = _reach(bunch, 2, _TAIL_ALONG)
     if reach > distance:
-        message = f"the bunch reaches through the cathode: {called} is {reach * 1e3:.4g} mm behind its centre"
+        message = f"the bunch reaches through the cathode: {called} is {reach:.4g} m behind its centre"
         (reading.warn if bunch.extent(2) is None else reading.fault)(_CATHODE, message)
     return None
 

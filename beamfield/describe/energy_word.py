@@ -12,6 +12,8 @@ _MOMENTUM = units.unit("eV/c").dimension
 
 def beta_gamma(quantity, species):
     """Momentum over m c of one particle of the species [1]; InputError for an energy that it cannot have."""
+    if quantity.unit_text.startswith("meV"):
+        raise InputError(f"{excerpt(quantity.text)}: m is milli, and no beam is that slow; did you mean 'MeV'?")
     return float(_road(quantity)(quantity, species))
 
 

@@ -59,4 +59,5 @@ class Key:
         """The value itself; InputError where it is not among those allowed."""
         if self.above < value < self.below and self.least <= value <= self.most:
             return value
-        raise InputError(f"{excerpt(text)} is outside what is allowed: {self.span}")
+        said = excerpt(text) if text else f"{value:g}, which the rest of the case makes it,"
+        raise InputError(f"{said} is outside what is allowed: {self.span}")

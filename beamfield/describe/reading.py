@@ -1,6 +1,7 @@
 """What has been read of a case so far: the nodes and values by key, and every fault found on the way."""
 
-from beamfield.describe import kinds
+from beamfield.describe import checked_quantity
+from beamfield.describe.kinds import CONVERTED
 from beamfield.describe.nearest import excerpt, hint
 from beamfield.describe.number_text import whole_number
 from beamfield.describe.tree import Scalar
@@ -13,16 +14,22 @@ _MOST_FAULTS = 100
 class Reading:
     """Nodes by key, quantities of the keys that have been read as such, faults and warnings.
 
-    A key whose text was refused has a node and no value: whoever needs it then stays silent, for its fault is said.
+    A key whose text was refused has a node and no value, and one that was misspelt or stood in an unreadable section is
+    among `unread`: whoever needs it then stays silent, for its fault is said.
     """
 
     def __init__(self, file, nodes):
         self.file, self.nodes = file, nodes
         self.quantities, self.words, self.faults, self.warnings = {}, {}, [], []
+        self.unread = set()
 
     def __contains__(self, key):
         """Whether the case has the key, readable or not."""
-        return key in self.nodes
+        return key in self.nodes or any(f"{key}.".startswith(f"{lost}." if lost else "") for lost in self.unread)
+
+    def written(self, *keys):
+        """Those of some keys that stand in the case as they should be written."""
+        return [key for key in keys if key in self.nodes]
 
     def place(self, key):
         """Line and column of a key, or of the nearest section above it that the case has."""
@@ -63,17 +70,17 @@ class Reading:
 
     def si(self, key, absent=None):
         """The SI value of a quantity whose kind has but one meaning; `absent` where the case lacks it."""
-        if key not in self.nodes:
+        if key not in self:
             return absent
         return self.quantities[key].si if key in self.quantities else None
 
     def word(self, key, absent=None):
         """A word, text, file name or whole number that has been read; `absent` where the case lacks it."""
-        return self.words.get(key) if key in self.nodes else absent
+        return self.words.get(key) if key in self else absent
 
     def within(self, key, value):
         """The value that a key came to, or None with a fault where the vocabulary does not allow it."""
-        return self.attempt(key, entry(key).check, value, self.text(key))
+        return self.attempt(key, entry(key).check, value, self.text(key) or "")
 
     def read_all(self):
         """Read every scalar as the vocabulary says."""
@@ -89,8 +96,8 @@ class Reading:
             self.words.update({} if value is None else {key: value})
 
     def _read_quantity(self, key, said, text):
-        quantity = self.attempt(key, kinds.read, text, said.kind)
-        if quantity and said.kind not in kinds.CONVERTED:
+        quantity = self.attempt(key, checked_quantity.read, text, said.kind)
+        if quantity and said.kind not in CONVERTED:
             quantity = quantity if self.within(key, quantity.si) is not None else None
         if quantity:
             self.quantities[key] = quantity
@@ -123,8 +130,8 @@ def _whole(text, said):
 def _word(text, said):
     if text in said.choices:
         return text
-    choices = ", ".join(said.choices)
-    raise InputError(f"{excerpt(text)} is not known here{hint(text, said.choices)}; choose from {choices}")
+    way = hint(text, said.choices) or f"; choose from {', '.join(said.choices)}"
+    raise InputError(f"{excerpt(text)} is not known here{way}")
 
 
 _READERS = {"whole": _whole, "word": _word}

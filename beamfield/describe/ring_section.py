@@ -29,7 +29,7 @@ def _tune(reading, key):
 
 
 def _optics(reading, circumference, folder):
-    if not isinstance(reading.nodes["ring.optics"], Mapping):
+    if not isinstance(reading.nodes.get("ring.optics"), Mapping):
         return reading.attempt("ring.optics", read_optics, reading.word("ring.optics"), folder, circumference)
     betas = (reading.si("ring.optics.beta_x"), reading.si("ring.optics.beta_y"))
     return reading.attempt("ring.optics", Optics.mean, *betas, reading.si("ring.optics.dispersion_x", absent=0.0))

@@ -19,9 +19,8 @@ def spread(reading, folder):
 
 
 def _particles(reading, folder):
-    for profile in _PROFILES:
-        if profile in reading:
-            reading.fault(profile, "a particle file already says how the charges are spread; keep one of the two")
+    for profile in reading.written(*_PROFILES):
+        reading.fault(profile, "a particle file already says how the charges are spread; keep one of the two")
     return reading.attempt(_PARTICLES, read_particles, reading.word(_PARTICLES), folder)
 
 

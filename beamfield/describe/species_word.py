@@ -22,11 +22,9 @@ def _named(word):
         return species_table.named(word)
     except KeyError:
         pass
-    way = hint(word, species_table.NAMES) or f"; choose from {', '.join(species_table.NAMES)}"
-    raise InputError(
-        f"{excerpt(word)} is no species here{way}, or write {{isotope: Ar-40, charge_state: 8}} "
-        "or {mass: 938.272 MeV/c2, charge_state: 1}"
-    )
+    names = ", ".join(species_table.NAMES)
+    ways = f"; choose from {names}, {{isotope: Ar-40, charge_state: 8}}, {{mass: 938.272 MeV/c2, charge_state: 1}}"
+    raise InputError(f"{excerpt(word)} is no species here{hint(word, species_table.NAMES) or ways}")
 
 
 def _described(reading):
@@ -50,4 +48,6 @@ def _mass(reading):
 
 
 def _of_mass(mass, state, text):
+    if state == 0:
+        raise InputError("'0': a neutral particle has no field; write its charge in elementary charges")
     return Species(f"mass {text}, charge {state:+d} e", mass, state * ELEMENTARY_CHARGE)

@@ -16,13 +16,18 @@ def check(tree, file):
 def _visit(reading, path, node):
     said, parts = vocabulary.key(path), vocabulary.parts(path)
     if isinstance(node, Scalar) and node.empty:
-        reading.fault(path, f"has no value; {_example(said)}")
+        _lose(reading, path, f"has no value; {_example(said, parts)}")
     elif isinstance(node, Mapping) and parts:
         _visit_section(reading, path, node, said, parts)
     elif isinstance(node, Sequence) and said.kind == "list":
         _visit_list(reading, path, node)
     elif not (isinstance(node, Scalar) and said.scalar):
-        reading.fault(path, _misplaced(node, said, parts))
+        _lose(reading, path, _misplaced(node, said, parts))
+
+
+def _lose(reading, path, message):
+    reading.unread.add(path)
+    reading.fault(path, message)
 
 
 def _visit_list(reading, path, node):
@@ -46,24 +51,25 @@ def _check_complete(reading, path, node, said, parts):
     present = {key.text for key, _ in node.pairs}
     if said.kind == "one of" and len(present) != 1:
         reading.fault(path, f"is one of {', '.join(parts)}; here it is {', '.join(sorted(present)) or 'none'}")
-    misspelt = {nearest(word, parts) for word in present - set(parts)}
+    misspelt = {nearest(word, parts) for word in present - set(parts)} - {None} - present
+    reading.unread.update(f"{path}.{name}".removeprefix(".") for name in misspelt)
     for name, part in parts.items():
         if part.required and name not in present | misspelt:
-            reading.fault(f"{path}.{name}".removeprefix("."), f"is missing; {_example(part)}")
+            inner = f"{path}.{name}".removeprefix(".")
+            _lose(reading, inner, f"is missing; {_example(part, vocabulary.parts(inner))}")
 
 
-def _example(said):
+def _example(said, parts):
     if said.example:
-        return f"write one such as '{said.name}: {said.example}'" if said.name else f"write one such as {said.example}"
-    return said.says[0].lower() + said.says[1:].rstrip(".")
+        return f"write one such as '{said.name}: {said.example}'" if "[" not in said.name else f"write {said.example}"
+    return f"it has the keys {', '.join(parts)}" if parts else "it is a list"
 
 
 def _misplaced(node, said, parts):
     if isinstance(node, Scalar):
-        names = ", ".join(parts)
-        return f"{excerpt(node.text)} cannot stand here; " + (f"it has the keys {names}" if names else "it is a list")
+        return f"{excerpt(node.text)} cannot stand here; {_example(said, parts)}"
     what = "a section" if isinstance(node, Mapping) else "a list"
-    return f"{what} cannot stand here; {_example(said)}"
+    return f"{what} cannot stand here; {_example(said, parts)}"
 
 
 def _unknown(word, path, parts):

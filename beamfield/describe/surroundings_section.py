@@ -27,18 +27,17 @@ def surroundings(reading):
 
 
 def _warn_of_images(reading):
-    if _CHAMBER in reading:
-        reading.warn(_CHAMBER, f"{_NO_IMAGE}: it is only checked that the beam fits")
-    for part in ("surroundings.poles", "surroundings.cathode"):
-        if part in reading:
-            reading.warn(part, _NO_IMAGE)
+    for key in reading.written(_CHAMBER):
+        reading.warn(key, f"{_NO_IMAGE}: it is only checked that the beam fits")
+    for key in reading.written("surroundings.poles", "surroundings.cathode"):
+        reading.warn(key, _NO_IMAGE)
 
 
 def _chamber(reading):
     shape = reading.word(f"{_CHAMBER}.shape")
     if shape is None:
         return None
-    wanted = dict.fromkeys(key for key in _SIZES[shape] if key)
+    wanted = _wanted(shape)
     for key in _KEYS:
         _check_key(reading, f"{_CHAMBER}.{key}", key in wanted, shape)
     half_width, half_height = (reading.si(f"{_CHAMBER}.{key}") if key else inf for key in _SIZES[shape])
@@ -47,9 +46,9 @@ def _chamber(reading):
 
 def _check_key(reading, key, wanted, shape):
     if wanted and key not in reading:
-        reading.fault(key, f"is missing; it goes with a {shape} chamber")
-    if not wanted and key in reading:
-        reading.fault(key, f"does not go with a {shape} chamber; it has {' and '.join(_wanted(shape))}")
+        reading.fault(key, f"is missing; a chamber of shape '{shape}' has it")
+    if not wanted and reading.written(key):
+        reading.fault(key, f"a chamber of shape '{shape}' has {' and '.join(_wanted(shape))} instead")
 
 
 def _wanted(shape):

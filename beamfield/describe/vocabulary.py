@@ -23,7 +23,7 @@ def parts(path):
 
 def _by_section():
     sections = {}
-    for each in KEYS.values():
+    for each in (key for key in KEYS.values() if not key.name.endswith("[]")):
         sections.setdefault(each.path.rpartition(".")[0], {})[each.name] = each
     return sections
 

@@ -57,7 +57,7 @@ def test_average_of_a_periodic_function():
 
 def test_a_repeated_place_and_a_closed_end_are_welcome(tmp_path):
     """Common practice, no source: tables name the ends of elements twice, and the end of the ring as its beginning."""
-    rows = ["0,10,20,1", "30,11,19,2", "30,11.05,19,2", "70,12,18,1", "100.00001,10.05,20,1.01"]
+    rows = ["0,10,20,0", "30,11,19,2", "30,11.05,19,2", "70,12,18,1", "100.00001,10.05,20,0.01"]
     optics = read(write(tmp_path, *rows), RING)
     assert optics.weights.sum() == pytest.approx(1.0, rel=rounding)
     assert optics.weights.min() > 0.0

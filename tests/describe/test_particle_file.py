@@ -94,6 +94,7 @@ REFUSED = {
     "x,y,z,weight\n1,2,3,0\n2,3,4,0\n": [": weight: every weight is 0"],
     "x,y,z,weight\n1,2,3,1\n2,3,4,0\n": [": x: all particles that count", ": y: all", ": z: all"],
     "x,y,z\n1,.1,3\n2,.1,4\n5,.1,6\n": [": y: all particles that count share one y"],
+    "x,y,z\n" + "".join(f"{k},1000.1,{k}\n" for k in range(7)): [": y: all particles that count share one y"],
     "x,y,z,ux,uy,uz\n1,2,3,0,0,5\n2,3,4,0,0,-5\n": [
         ":3:11: uz: -5 is not between 0 and 1e9: every particle goes forwards"
     ],
@@ -142,6 +143,7 @@ def test_far_from_the_origin(tmp_path):
     rows = "".join(f"{k * step!r},{-k * step!r},{1024.0 + k * step!r}\n" for k in range(5))
     bunch = read(write(tmp_path, "x,y,z\n" + rows))
     np.testing.assert_allclose(bunch.rms, np.sqrt(2.0) * step, rtol=rounding)
+    np.testing.assert_array_equal(bunch.positions[2], bunch.positions[0])
 
 
 def test_progress(tmp_path):
