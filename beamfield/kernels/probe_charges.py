@@ -56,9 +56,12 @@ def spread(x, inside, pancake):
 
 @compiled()
 def column(x, y, z, rho, c, top, weight, along, paired, w_paired, single, w_single, gamma):
-    """Sum over the charges that stand above and below one place (x, y) from a probe at height z."""
+    """Field and potential of the charges that stand above and below one place (x, y) from a probe at height z.
+
+    The potential of a charge is its rest-frame field times its distance, taken along it: nothing new to compute.
+    """
     u = math.sqrt((gamma - 1.0) * (gamma + 1.0))
-    ex = ey = ez = 0.0
+    ex = ey = ez = phi = 0.0
     if along == COASTING:
         inner, outer, side = ENDLESS, ENDLESS, 1.0
     else:
@@ -85,12 +88,15 @@ def column(x, y, z, rho, c, top, weight, along, paired, w_paired, single, w_sing
                 ex += charge * fx
                 ey += charge * fy
                 ez += charge * fz
-    return ex, ey, ez
+                phi -= charge * (x * fx + y * fy + gamma * dz * fz)
+    return ex, ey, ez, phi
 
 
 @compiled(parallel=True)
 def probe_field(probes, scales, kinds, azimuth, w_azimuth, radial, w_radial, paired, w_paired, single, w_single, gamma, out):
     """Fill out (3, M) with lab E / gamma at probes (3, M), given in the frame of the bunch, per unit central density.
+
+    A fourth row of out takes phi / gamma; a coasting beam has none.
 
     scales (a, b, c), kinds (across, along): the density is profile(x2/a2 + y2/b2) profile(z2/c2);
     azimuth (M, 2, K) and w_azimuth (M, K), directions for each probe in units of a and b; other nodes on (0, 1).
@@ -105,7 +111,7 @@ def probe_field(probes, scales, kinds, azimuth, w_azimuth, radial, w_radial, pai
         pancake = c * c < a * b
         top = c * (WINDOW if along == GAUSSIAN else 1.0)
         near = max(abs(c - abs(z)), 0.05 * c) if along == FLAT else c
-        ex = ey = ez = 0.0
+        ex = ey = ez = phi = 0.0
         for i in range(azimuth.shape[2]):
             cos, sin = azimuth[m, 0, i], azimuth[m, 1, i]
             stretch = math.hypot(a * cos, b * sin)
@@ -123,10 +129,13 @@ def probe_field(probes, scales, kinds, azimuth, w_azimuth, radial, w_radial, pai
                 weight = profile(across, qx * qx + qy * qy) * a * b * r * dr * w_azimuth[m, i]
                 if weight > 0.0:
                     x, y = r * a * cos, r * b * sin
-                    fx, fy, fz = column(
+                    fx, fy, fz, f = column(
                         x, y, z, r * stretch, c, top, weight, along, paired, w_paired, single, w_single, gamma
                     )
                     ex += fx
                     ey += fy
                     ez += fz
+                    phi += f
         out[0, m], out[1, m], out[2, m] = ex, ey, ez
+        if out.shape[0] > 3:
+            out[3, m] = phi
