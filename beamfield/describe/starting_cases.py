@@ -8,7 +8,7 @@ STARTING_CASES = {  # kind -> (what it shows, the case as nested texts)
             "bunch": {
                 "species": "proton",
                 "energy": "120 MeV kinetic",
-                "intensity": "1.8e12 ± 0.1e12 particles",
+                "intensity": "6e11 ± 0.3e11 particles",
                 "shape": "gaussian",
                 "size": {"x": "6.1 mm rms", "y": "5.5 mm rms", "z": "95 ns rms"},
                 "emittance": {"x": "2.6 um normalised rms", "y": "2.4 um normalised rms"},
@@ -61,7 +61,7 @@ STARTING_CASES = {  # kind -> (what it shows, the case as nested texts)
             "bunch": {
                 "species": {"isotope": "C-12", "charge_state": "6"},
                 "energy": "50 MeV/u kinetic",
-                "intensity": "4 mA mean",
+                "intensity": "60 mA mean",
                 "shape": {"transverse": "kv", "longitudinal": "coasting"},
                 "emittance": {"x": "12 um geometric full", "y": "8 um geometric full"},
                 "momentum_spread": "0.05 % rms",

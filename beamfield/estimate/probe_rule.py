@@ -9,20 +9,23 @@ import numpy as np
 
 @dataclass(frozen=True, slots=True)
 class Rule:
-    """Charges in azimuth, distance and height round a probe; `faced` when the density ends on a face along z."""
+    """Charges in azimuth, distance and height round a probe; `faced` when the density ends on a face along z; `window`, rms
+    lengths of a Gaussian that are kept: beyond 6.5 lies less than 1e-9 of it."""
 
     azimuth: int
     radial: int
     height: int
     faced: bool
+    window: float = 6.5
 
     @property
     def charges(self):
         return self.azimuth * self.radial * self.height
 
     def thinned(self, part):
-        """The same rule with `part` of the nodes in each direction."""
-        return Rule(even(part * self.azimuth), max(4, round(part * self.radial)), even(part * self.height), self.faced)
+        """The same rule with `part` of the nodes in each direction and half an rms length less of a Gaussian."""
+        radial = self.radial if self.radial == 2 else max(4, round(part * self.radial))
+        return Rule(even(part * self.azimuth), radial, even(part * self.height), self.faced, self.window - 0.5)
 
 
 def even(number):
@@ -42,6 +45,12 @@ def rule_for(aspect, section, charges, faced):
     radial = max(4, round(sqrt(slenderness * charges / azimuth)))
     height = max(4, int(charges / azimuth / radial) // 2 * 2)
     return Rule(azimuth, radial, height, faced)
+
+
+def ray_rule(charges):
+    """Rule for the rays of an ellipsoid: two charges on each, four times as many slopes as directions."""
+    azimuth = 4 * max(2, round(sqrt(charges / 8.0) / 4.0))
+    return Rule(azimuth, 2, max(6, int(charges / 2.0 / azimuth)), True)
 
 
 @lru_cache(64)
@@ -84,7 +93,9 @@ def azimuth_nodes(probes, scales, count, edged, ellipsoid=False):
         edges = ellipkinc(centre[:, None] + edges, parameter)
         nodes, slopes = zip(*(rooted_nodes(share) for share in shares), strict=True)
         spans = np.diff(edges, axis=1)
-        argument[outside] = np.concatenate([edges[:, [i]] + spans[:, [i]] * nodes[i] for i in range(len(shares))], axis=1)
+        argument[outside] = np.concatenate(
+            [edges[:, [i]] + spans[:, [i]] * nodes[i] for i in range(len(shares))], axis=1
+        )
         weights[outside] = np.concatenate([spans[:, [i]] * slopes[i] for i in range(len(shares))], axis=1)
     sin, cos, slope, _ = ellipj(argument, parameter)
     directions = (cos, sin) if a >= b else (sin, cos)

@@ -5,6 +5,8 @@ from pathlib import Path
 from numba import njit
 from numba.core import event
 
+from beamfield.kernels import notice
+
 
 def compiled(parallel=False, inline="never"):
     """Decorator: njit with error_model="numpy", cached where a cache folder is writable; never fastmath."""
@@ -19,20 +21,19 @@ def compiled(parallel=False, inline="never"):
     return decorate
 
 
-def on_compile(tell):
-    """Call tell() once, when the first kernel is compiled because no kept machine code fits."""
+class _Tell(event.Listener):
+    """Calls notice.tell once, when the first kernel is compiled because no kept machine code fits."""
 
-    class Once(event.Listener):
-        def on_start(self, event):
-            nonlocal tell
-            if tell is not None:
-                tell, told = None, tell
-                told()
+    def on_start(self, event):
+        told, notice.tell = notice.tell, None
+        if told is not None:
+            told()
 
-        def on_end(self, event):
-            pass
+    def on_end(self, event):
+        pass
 
-    event.register("numba:compile", Once())
+
+event.register("numba:compile", _Tell())
 
 
 def _forget_stale():

@@ -6,7 +6,8 @@ distance across from the point, u = l -/+ z the distances to the ends, R = sqrt(
     E_perp = rho  closed integral of n dl [asinh((l - z) / d) + asinh((l + z) / d)]
     E_z    = rho  closed integral of (p' - p) . n dl [1 / (R_1 + |l - z|) - 1 / (R_2 + |l + z|)]
 
-(Gauss's theorem on 1/r over the volume, and on div[d (R - |u|) / d^2] = 1/R over each end; own derivation, common practice.)
+(Gauss's theorem on 1/r over the volume, and on div[d (R - |u|) / d^2] = 1/R over each end; own derivation, common
+practice.)
 """
 
 import numpy as np
@@ -21,8 +22,8 @@ _BLOCK = 256
 def uniform_cylinder_field(points, half_axes):
     """Field (3, M) [1/m^2] at points (3, M) [m], anywhere; half_axes (a, b, l) [m]. The rim itself is a singular line.
 
-    The trapezoidal rule round the edge, its nodes crowded about the part next to the point and its step halved until two
-    rules agree; good to rounding of the largest field, so that a point very near the centre has fewer digits.
+    The trapezoidal rule round the edge, its nodes crowded about the part next to the point and its step halved until
+    two rules agree; good to rounding of the largest field, so that a point very near the centre has fewer digits.
     """
     a, b, length = half_axes
     points = np.asarray(points, dtype=float)
@@ -39,8 +40,8 @@ def uniform_cylinder_field(points, half_axes):
 def uniform_cylinder_gradient(half_axes):
     """Slopes dE_i/dx_i (3,) [1/m^3] at the centre; half_axes (a, b, l) [m].
 
-    (1/pi) closed integral of (cos^2 psi / (d^2 R), sin^2 psi / (d^2 R), 1 / (l R (R + l))) dpsi, d the half width towards
-    psi: every term positive. For a round section d = a and all three are elementary.
+    (1/pi) closed integral of (cos^2 psi / (d^2 R), sin^2 psi / (d^2 R), 1 / (l R (R + l))) dpsi, d the half width
+    towards psi: every term positive. For a round section d = a and all three are elementary.
     """
     a, b, length = half_axes
     psi = azimuths(a, b)
@@ -68,7 +69,7 @@ def uniform_cylinder_axis_field(z, half_axes):
 
 
 def azimuths(a, b):
-    """Angles psi (K,) over the whole turn, enough for a periodic function of the half width of an ellipse of half axes a, b."""
+    """Angles psi (K,) round the turn, enough for a mean over the half width of an ellipse of half axes a, b."""
     return 2.0 * np.pi * np.arange(count := 80 * int(np.ceil(max(a / b, b / a)))) / count
 
 

@@ -8,13 +8,15 @@ from beamfield.constants import ELEMENTARY_CHARGE, SPEED_OF_LIGHT
 def peak_line_density(particles, sigma_z, peak):
     """Largest number of particles per metre [1/m]: N h / sigma_z.
 
-    particles [1], rms length sigma_z [m], peak the height h of the line density of one particle times its rms length [1].
+    particles [1], rms length sigma_z [m], peak the height h of the line density of one particle times its rms length
+    [1].
     """
     return particles * peak / sigma_z
 
 
 def current(charge, line_density, velocity):
-    """Current past a fixed place, taken positive [A]: abs(q) lambda v; charge [C], line_density [1/m], velocity [m/s]."""
+    """Current past a fixed place, taken positive [A]: abs(q) lambda v; charge [C], line_density [1/m], velocity
+    [m/s]."""
     return abs(charge) * line_density * velocity
 
 
@@ -38,7 +40,8 @@ def perveance(current, beta_gamma, characteristic_current, neutralisation=0.0):
 
     Domain: beam long against its width in its own frame.
     Source: J. D. Lawson, Perveance and the Bennett pinch relation in partially neutralized electron beams, J. Electron.
-    Control 5, 146, 1958 (its abstract read); from memory of M. Reiser, Theory and Design of Charged Particle Beams, 1994.
+    Control 5, 146, 1958 (its abstract read); from memory of M. Reiser, Theory and Design of Charged Particle Beams,
+    1994.
     """
     return 2.0 * current / (characteristic_current * beta_gamma**3) * (1.0 - (1.0 + beta_gamma**2) * neutralisation)
 

@@ -1,7 +1,7 @@
-"""Line densities of one unit of charge, smoothed by a Gaussian of variance s: value, slope, and curvature at the centre.
+"""Line densities of one unit of charge, smoothed by a Gaussian of variance s: value, slope, curvature at the centre.
 
-The smoothing is what the heat equation does to a density; `product` integrates it to a field. `half` is the rms length of a
-Gaussian and half the full length of a uniform or parabolic line [m].
+The smoothing is what the heat equation does to a density; `product` integrates it to a field. `half` is the rms
+length of a Gaussian and half the full length of a uniform or parabolic line [m].
 """
 
 from math import pi, sqrt

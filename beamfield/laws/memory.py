@@ -1,7 +1,7 @@
 """How long a bunch must have moved uniformly for its self-field to be the one that moves with it.
 
-Source: geometry of the retarded time (from memory of L. D. Landau and E. M. Lifshitz, The Classical Theory of Fields, 1975,
-sec. 63).
+Source: geometry of the retarded time (from memory of L. D. Landau and E. M. Lifshitz, The Classical Theory of Fields,
+1975, sec. 63).
 """
 
 
@@ -14,7 +14,8 @@ def transverse_memory(beta_gamma, half_extent):
 
 
 def longitudinal_memory(beta_gamma, length):
-    """Distance [m] that the bunch goes while light from its tail reaches its head, `length` [m] ahead: beta l / (1 - beta).
+    """Distance [m] that the bunch goes while light from its tail reaches its head, `length` [m] ahead: beta l / (1 -
+    beta).
 
     Written beta gamma (gamma + beta gamma) l, since 1 - beta has no digits left at high energy.
     """

@@ -2,13 +2,12 @@
 
 A density rho smoothed by a Gaussian of variance s solves the heat equation, so its potential over q / (4 pi eps0) is
 2 pi integral_0^inf rho_s ds, and a product stays a product: E = -2 pi integral_0^inf grad(T_s Lambda_s) ds.
-Closed in one dimension for a Gaussian section everywhere; for a uniform ("kv") or parabolic ellipse on the axis and for the
-slopes at the centre, where a flat section asks for a mean over directions besides. Elsewhere such bunches have no such form.
-Lengths [m]: `across` (2,) rms sizes of a Gaussian, half axes of an ellipse; `half` rms length of a Gaussian line, half the
-full length of a uniform or parabolic one. Source: the heat kernel, textbook potential theory (own derivation).
+Closed in one dimension for a Gaussian section everywhere; for a uniform ("kv") or parabolic ellipse on the axis and
+for the slopes at the centre, where a flat section asks for a mean over directions besides. Elsewhere such bunches
+have no such form. Lengths [m]: `across` (2,) rms sizes of a Gaussian, half axes of an ellipse; `half` rms length of a
+Gaussian line, half the full length of a uniform or parabolic one. Source: the heat kernel, textbook potential theory
+(own derivation).
 """
-
-from math import pi
 
 import numpy as np
 

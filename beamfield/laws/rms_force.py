@@ -1,7 +1,8 @@
 """Mean of place times force over a bunch, <x E_x>: what the rms envelope equation asks of a density.
 
 Over q / (4 pi eps0), in the rest frame; [1/m] for a bunch of unit charge, [1] for a long beam of unit line density.
-Source: F. J. Sacherer, RMS envelope equations with space charge, IEEE Trans. Nucl. Sci. NS-18, 1105, 1971 (its summary read).
+Source: F. J. Sacherer, RMS envelope equations with space charge, IEEE Trans. Nucl. Sci. NS-18, 1105, 1971 (its
+summary read).
 """
 
 from math import pi, sqrt
@@ -26,7 +27,8 @@ MEAN_LINE_DENSITY = {
 
 
 def ellipsoid_rms_force(profile, sigma):
-    """<x_i E_i> (3,) [1/m] of a bunch whose density is constant on similar ellipsoids; sigma (3,) [m] in the rest frame.
+    """<x_i E_i> (3,) [1/m] of a bunch whose density is constant on similar ellipsoids; sigma (3,) [m] in the rest
+    frame.
 
         <x_i E_i> = C sigma_i^2 R_D(.., .., sigma_i^2)
 
@@ -63,5 +65,5 @@ def space_charge_ratio(sigma, rms_force, particles, classical_radius, beta_gamma
 
 
 def long_beam_ratio(sigma, rms_force, perveance, emittance):
-    """The same for a beam of constant line density: sigma^2 K <x E_x> / (2 emittance^2), with <x E_x> of unit line density."""
+    """The same for a constant line density [1]: sigma^2 K <x E_x> / (2 emittance^2), <x E_x> of unit line density."""
     return sigma**2 * perveance * rms_force / (2.0 * emittance**2)

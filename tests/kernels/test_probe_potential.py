@@ -50,7 +50,7 @@ def test_gaussian_at_its_centre(length):
     rule = rule_for(length / sqrt(0.7), 1.0 / 0.7, 32768, False)
     directions, weights = azimuth_nodes(np.zeros((3, 1)), scales, rule.azimuth, False)
     out, nodes = np.empty((4, 1)), (*unit_nodes(rule.radial), *height_nodes(rule))
-    probe_charges.probe_field(np.zeros((3, 1)), scales, (0, 0), directions, weights, *nodes, GAMMA, out)
+    probe_charges.probe_field(np.zeros((3, 1)), scales, (0, 0), 6.0, directions, weights, *nodes, GAMMA, out)
     window = 2e-8  # what lies beyond six rms sizes
     assert out[3, 0] / ((2.0 * pi) ** 1.5 * np.prod(scales)) == pytest.approx(
         gaussian_centre_potential(scales), rel=window
