@@ -53,8 +53,13 @@ def central_density(bunch):
 
 def density_field(bunch, rule, points):
     """Lab E (3, M) [V/m] at lab points (3, M) about the centre of a bunch known as a density."""
+    return density_map(bunch, rule, points)[:3]
+
+
+def density_map(bunch, rule, points):
+    """Lab E [V/m] and, last, phi [V], (4, M), at lab points (3, M); phi of a coasting beam means nothing."""
     probes = np.ascontiguousarray(points * np.array([1.0, 1.0, bunch.gamma])[:, None], float)
-    out = np.empty_like(probes)
+    out = np.empty((4, probes.shape[1]))
     for first in range(0, probes.shape[1], _BLOCK):
         block = np.ascontiguousarray(probes[:, first : first + _BLOCK])
         out[:, first : first + _BLOCK] = _sum(bunch, rule, block)
@@ -64,7 +69,7 @@ def density_field(bunch, rule, points):
 def _sum(bunch, rule, probes):
     from beamfield.kernels import probe_charges, probe_rays
 
-    shape, out = bunch.shape, np.empty_like(probes)
+    shape, out = bunch.shape, np.empty((4, probes.shape[1]))
     scales = tuple(float(scale) for scale in rest_scales(bunch))
     edged = shape.transverse != "gaussian"
     directions, weights = azimuth_nodes(probes, scales, rule.azimuth, edged, shape.ellipsoid)

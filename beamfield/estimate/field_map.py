@@ -43,15 +43,16 @@ def field_map(title, evaluate, grid, block=BLOCK):
     return FieldMap(title, grid, quantities, field_blocks(evaluate, grid, block))
 
 
-def co_moving(field, charge, beta_gamma, phi=None):
-    """What a map shows of a bunch whose charges share the momentum beta_gamma along +z.
+def co_moving(electric, charge, beta_gamma, phi=None):
+    """What a map shows of charges that share the momentum beta_gamma along +z.
 
-    field, with E and B (3, K); charge of the particle that the force acts on [C]; phi (K,) [V], left out if unknown.
-    The force is q E / gamma^2 across and q E_z along, without the difference of near equals in E + v x B.
+    electric, E (3, K) [V/m]; charge of the particle that the force acts on [C]; phi (K,) [V], left out where unknown.
+    B = beta z x E / c, A = beta phi z / c. The force is q E / gamma^2 across and q E_z along, free of the difference of
+    near equals in E + v x B.
     """
     gamma = np.hypot(1.0, beta_gamma)
-    values = {"E": field.E, "B": field.B, "force": charge * field.E / np.array([[gamma**2], [gamma**2], [1.0]])}
-    if phi is not None:
-        along = beta_gamma / gamma * phi / SPEED_OF_LIGHT
-        values |= {"phi": phi, "A": np.stack([np.zeros_like(phi), np.zeros_like(phi), along])}
-    return values
+    slowness, nought = beta_gamma / gamma / SPEED_OF_LIGHT, np.zeros(electric.shape[1])
+    magnetic = slowness * np.stack([-electric[1], electric[0], nought])
+    force = charge * electric / np.array([[gamma**2], [gamma**2], [1.0]])
+    values = {"E": electric, "B": magnetic, "force": force}
+    return values if phi is None else values | {"phi": phi, "A": np.stack([nought, nought, slowness * phi])}

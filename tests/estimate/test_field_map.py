@@ -21,7 +21,7 @@ def bunch(gamma):
 
     def evaluate(points):
         phi, _ = potentials(points, places, -1e-12, (0.0, 0.0, u))
-        return co_moving(superpose(points, places, -1e-12, (0.0, 0.0, u)), CHARGE, u, phi)
+        return co_moving(superpose(points, places, -1e-12, (0.0, 0.0, u)).E, CHARGE, u, phi)
 
     return evaluate, u, places
 
@@ -37,6 +37,8 @@ def test_force_and_vector_potential(gamma):
     _, vector = potentials(points, places, -1e-12, np.tile([[0.0], [0.0], [u]], 100))
     rounding = 1e-13
     assert np.allclose(values["force"], lorentz, rtol=0.0, atol=rounding * np.abs(CHARGE * values["E"]).max())
+    magnetic = superpose(points, places, -1e-12, (0.0, 0.0, u)).B
+    assert np.allclose(values["B"], magnetic, rtol=0.0, atol=rounding * np.abs(magnetic).max())
     assert np.allclose(values["A"], vector, rtol=0.0, atol=rounding * np.abs(vector).max())
 
 
@@ -56,5 +58,4 @@ def test_blocks_make_the_map_whatever_their_size():
 
 def test_without_potentials():
     """Stated contract: what is not known is left out, not zero."""
-    field = superpose(np.ones((3, 2)), np.zeros((3, 1)), 1e-12, (0.0, 0.0, 2.0))
-    assert list(co_moving(field, CHARGE, 2.0)) == ["E", "B", "force"]
+    assert list(co_moving(np.ones((3, 2)), CHARGE, 2.0)) == ["E", "B", "force"]

@@ -5,7 +5,7 @@ from math import pi, sqrt
 import numpy as np
 import pytest
 
-from beamfield.estimate.probe_rule import Rule, azimuth_nodes, height_nodes, rule_for, unit_nodes
+from beamfield.estimate.probe_rule import azimuth_nodes, height_nodes, ray_rule, rule_for, unit_nodes
 from beamfield.kernels import probe_charges, probe_rays
 from beamfield.laws.ellipsoid import uniform_ellipsoid_potential
 from beamfield.laws.gaussian import gaussian_centre_potential
@@ -17,7 +17,7 @@ LENGTHS = pytest.mark.parametrize("length", [1e-3, 0.1, 1.0, 10.0, 1e3])
 
 def rayed(probes, scales, degree):
     """Field and potential (4, M) of unit central density by 32768 charges on rays."""
-    rule = Rule(azimuth=64, radial=2, height=256, faced=True)
+    rule = ray_rule(32768)
     directions, weights = azimuth_nodes(probes, scales, rule.azimuth, True, True)
     out = np.empty((4, probes.shape[1]))
     probe_rays.ray_field(probes, scales, degree, directions, weights, *height_nodes(rule), GAMMA, out)
@@ -30,7 +30,7 @@ def test_uniform_ellipsoid_inside_and_outside(length):
     scales = (1.0, 0.7, length)
     probes = np.random.default_rng(1).normal(size=(3, 40)) * np.array(scales)[:, None]
     potential = rayed(probes, scales, 0)[3] / (4.0 * pi / 3.0 * np.prod(scales))
-    quadrature = 1e-9 if length <= 1.0 else 1e-4
+    quadrature = 1e-7 if length <= 1.0 else 1e-4  # from just outside the edge; elsewhere far less
     assert np.allclose(potential, uniform_ellipsoid_potential(probes, scales), rtol=quadrature, atol=0.0)
 
 
