@@ -68,7 +68,14 @@ def _quantity(kind):
 
 def _form(form):
     head = rf"{form.head}\s+" if form.head else ""
-    words = rf"(\s+({'|'.join(word for group in form.groups for word in group)}|normalized))" if form.groups else ""
-    unit = r"\s*%?" if form.units[0] == "" else r"\s*[^\s0-9±+-].*"
-    count = f"{{{len(form.groups)}}}" if form.groups else ""
-    return rf"{head}{_NUMBER}(\s*(±|\+/?-)\s*{_NUMBER})?{unit}{words}{count}"
+    units = "|".join(_spellings(unit) for unit in form.units if unit)
+    unit = rf"(\s*({units}))" + ("?" if "" in form.units else "") if units else ""
+    words = "|".join(word for group in form.groups for word in group)
+    words = rf"(\s+({words}|normalized)){{{len(form.groups)}}}" if words else ""
+    return rf"{head}{_NUMBER}(\s*(±|\+/?-)\s*{_NUMBER})?{unit}{words}"
+
+
+def _spellings(unit):
+    """A unit with each of the letters that people write for micro, and any space between factors."""
+    micro = "[uµμ]" + unit[1:] if unit[0] == "u" and len(unit) > 1 else unit
+    return micro.replace(" ", r"\s+")

@@ -11,9 +11,9 @@ KINDS_OF_CASE = tuple(STARTING_CASES)
 _WIDTH = 100
 _HEAD = """\
 # {says}
-# The facility does not exist; change the values. A quantity says what it measures: a number, perhaps
-# with a ± tolerance, a unit, and words such as rms or kinetic. 'beamfield report FILE' evaluates
-# the case, 'beamfield check FILE' holds it against its limits.
+# The facility does not exist; change the values. A quantity says what it measures: a number, with
+# a ± tolerance where there is one, a unit, and words such as rms or kinetic. 'beamfield report
+# FILE' evaluates the case, 'beamfield check FILE' holds it against its limits.
 """
 
 

@@ -22,7 +22,9 @@ def answer(bunch, surroundings, ring, numerics):
 
 
 def checks(bunch, findings):
-    """Self-checks ((sentence, passed), ...): Gauss's law ties the three defocusing strengths to the density of the centre."""
+    """Self-checks ((sentence, passed), ...): Gauss's law ties the three defocusing strengths to the density of the
+    centre.
+    """
     if bunch.shape is None:
         return ()
     kappas = [findings[name] for name in ("defocusing_x", "defocusing_y", "defocusing_z") if name in findings]

@@ -14,8 +14,8 @@ from beamfield.estimate.textbook import closed_field
 def bunch_map(bunch, numerics):
     """The evaluate(points (3, K)) -> {name: values} of a field map of a bunch.
 
-    By closed form there are no potentials; a coasting beam has none that vanish far away. InputError where the shape has
-    no closed form.
+    By closed form there are no potentials; a coasting beam has none that vanish far away. InputError where the shape
+    has no closed form.
     """
     if numerics.method == "closed-form":
         return lambda points: _values(bunch, _closed(bunch, points), None)

@@ -17,13 +17,15 @@ def stencil_points(sigma, axes):
 
 
 def slope_weights(count):
-    """Weights (count,) of E(x)/x at the first places of the stencil for x = 0: the even polynomial through all of them."""
+    """Weights (count,) of E(x)/x at the first places of the stencil for x = 0: the even polynomial through all of
+    them.
+    """
     squares = STENCIL[:count] ** 2
     others = [np.delete(squares, i) for i in range(count)]
     return np.array([np.prod(other / (other - own)) for other, own in zip(others, squares, strict=True)])
 
 
-def slopes(field, sigma, axes=(0, 1, 2), count=len(STENCIL)):
+def slopes(field, sigma, axes=(0, 1, 2), count=5):
     """dE_i/dx_i (A,) at the centre for the given axes, of a function field(points) of lab points."""
     points = stencil_points(sigma, axes)
     values = field(points).reshape(3, len(axes), -1)
@@ -46,7 +48,8 @@ def smooth_slopes(field, sigma, axes=(0, 1, 2)):
 def peak_place(along, sigma, edge):
     """Distance [m] from the centre at which abs(along(places)) is largest, along one axis; `edge`, half extent or None.
 
-    A first row of places, then ever finer rows about the best of them: good for a smooth top and for the cusp at an edge.
+    A first row of places, then ever finer rows about the best of them: good for a smooth top and for the cusp at an
+    edge.
     """
     places = np.arange(1, FIRST + 1) * (PEAK_REACH * sigma / FIRST if edge is None else edge / (FIRST - 4))
     best, step = _best(along, places), places[0]

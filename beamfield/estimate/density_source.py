@@ -20,7 +20,9 @@ _BLOCK = 8192  # probes whose nodes are held in memory together
 
 @dataclass(frozen=True, slots=True)
 class DensitySource:
-    """fields: functions of lab points (3, M) that give lab E (3, M); the first is the answer, the others its variants."""
+    """fields: functions of lab points (3, M) that give lab E (3, M); the first is the answer, the others its
+    variants.
+    """
 
     bunch: object
     charges: int

@@ -1,4 +1,6 @@
-"""A bunch known as particles: its field as clouds, one for each, and the same from half of them and from wider clouds."""
+"""A bunch known as particles: its field as clouds, one for each, and the same from half of them and from wider
+clouds.
+"""
 
 from dataclasses import dataclass
 from functools import partial
@@ -16,7 +18,9 @@ TILT = 0.01  # spread of momenta, in units of m c, beyond which each particle ke
 
 @dataclass(frozen=True, slots=True)
 class ParticleSource:
-    """fields: functions of lab points (3, M) that give lab E (3, M); the first is the answer, the others its variants."""
+    """fields: functions of lab points (3, M) that give lab E (3, M); the first is the answer, the others its
+    variants.
+    """
 
     bunch: object
 
@@ -43,7 +47,9 @@ class ParticleSource:
 
     @property
     def size(self):
-        """Softening length [m]: least error for 10^3 ... 10^5 charges drawn from a Gaussian bunch, at random or evenly."""
+        """Softening length [m]: least error for 10^3 ... 10^5 charges drawn from a Gaussian bunch, at random or
+        evenly.
+        """
         return 0.13 * self.width * (131072.0 / self.bunch.macro.count) ** 0.2
 
     @property

@@ -9,8 +9,8 @@ import numpy as np
 
 @dataclass(frozen=True, slots=True)
 class Rule:
-    """Charges in azimuth, distance and height round a probe; `faced` when the density ends on a face along z; `window`, rms
-    lengths of a Gaussian that are kept: beyond 6.5 lies less than 1e-9 of it."""
+    """Charges in azimuth, distance and height round a probe; `faced` when the density ends on a face along z;
+    `window`, rms lengths of a Gaussian that are kept: beyond 6.5 lies less than 1e-9 of it."""
 
     azimuth: int
     radial: int
@@ -104,17 +104,20 @@ def azimuth_nodes(probes, scales, count, edged, ellipsoid=False):
 
 @lru_cache(64)
 def rooted_nodes(count):
-    """Nodes and weights on (0, 1) for an integrand that vanishes as a root at either end: Gauss-Legendre in the arc sine."""
+    """Nodes and weights on (0, 1) for an integrand that vanishes as a root at either end: Gauss-Legendre in the arc
+    sine.
+    """
     x, w = unit_nodes(count)
     turn = pi * (x - 0.5)
     return 0.5 + 0.5 * np.sin(turn), 0.5 * pi * w * np.cos(turn)
 
 
 def sectors(distance, z, count, needle):
-    """Edges (M, S + 1) of the sectors of azimuth, about the way to the axis, in which an edged bunch is seen from outside, and nodes in each.
+    """Edges (M, S + 1) of the sectors of azimuth, about the way to the axis, in which an edged bunch is seen from
+    outside, and nodes in each.
 
-    A needle of an ellipsoid fills three: the middle one looks at the section at the height of the probe, the outer two at what
-    stands beyond it above or below; each ends where a chord vanishes as a root.
+    A needle of an ellipsoid fills three: the middle one looks at the section at the height of the probe, the outer
+    two at what stands beyond it above or below; each ends where a chord vanishes as a root.
     """
     reach = np.where(distance > 1.0, np.arcsin(1.0 / np.maximum(distance, 1.0)), pi)
     if not needle:

@@ -1,10 +1,7 @@
 """How strong is the field of the bunch, and what does it do to a particle in it?"""
 
-from math import sqrt
-
 import numpy as np
 
-from beamfield.constants import COULOMB
 from beamfield.estimate.centre import peak_place, slopes, smooth_slopes
 from beamfield.estimate.finding import Finding
 from beamfield.estimate.frame import line_density

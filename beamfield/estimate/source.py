@@ -17,7 +17,9 @@ def source_of(bunch, numerics):
 
 
 def asked(source, question):
-    """value and doubt of question(field), a number or an array: its spread over the variants of the field, and rounding."""
+    """value and doubt of question(field), a number or an array: its spread over the variants of the field, and
+    rounding.
+    """
     value, *others = (question(field) for field in source.fields)
     spread = sum(np.square(other - value) for other in others)
     return value, np.sqrt(spread) + ROUNDING * np.abs(value)

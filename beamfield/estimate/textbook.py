@@ -7,7 +7,9 @@ from beamfield.laws import cylinder, ellipsoid, flat_beam, gaussian, parabolic, 
 
 
 def rest_scales(bunch):
-    """Semi-axes, or rms sizes where there is no edge, in the frame of the bunch (3,) [m]; z is 1 m for a coasting beam."""
+    """Semi-axes, or rms sizes where there is no edge, in the frame of the bunch (3,) [m]; z is 1 m for a coasting
+    beam.
+    """
     edges = [bunch.shape.edge(axis) or 1.0 for axis in range(3)]
     sigma = np.array([*bunch.sigma[:2], 1.0 if bunch.coasting else bunch.gamma * bunch.sigma[2]])
     return sigma * edges
@@ -24,7 +26,9 @@ def to_lab(bunch, rest):
 
 
 def closed_field(bunch, points):
-    """Lab E (3, M) [V/m] at lab points (3, M) about the centre, by the closed form of the shape; None where it has none."""
+    """Lab E (3, M) [V/m] at lab points (3, M) about the centre, by the closed form of the shape; None where it has
+    none.
+    """
     law = _field_law(bunch)
     return None if law is None else to_lab(bunch, law(points * np.array([1.0, 1.0, bunch.gamma])[:, None]))
 
@@ -37,7 +41,9 @@ def closed_gradient(bunch):
 
 
 def closed_axis_field(bunch, axis, places):
-    """Lab E_i (M,) [V/m] at places (M,) [m] along one axis from the centre, by a closed form; None where there is none."""
+    """Lab E_i (M,) [V/m] at places (M,) [m] along one axis from the centre, by a closed form; None where there is
+    none.
+    """
     points = np.zeros((3, len(places)))
     points[axis] = places
     field = closed_field(bunch, points)

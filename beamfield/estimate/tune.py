@@ -33,7 +33,9 @@ def _finding(name, shifts, method, tune, surroundings):
 
 
 def local_sizes(bunch, optics):
-    """rms sizes (x, y) [m] at each row of the optics: from the emittances where a table says how beta runs, else constant."""
+    """rms sizes (x, y) [m] at each row of the optics: from the emittances where a table says how beta runs, else
+    constant.
+    """
     if bunch.emittance is None or not optics.tabulated:
         return np.tile(np.array(bunch.sigma[:2])[:, None], len(optics.s))
     spread = bunch.momentum_spread or 0.0
@@ -42,7 +44,9 @@ def local_sizes(bunch, optics):
 
 
 def focusing_round_the_ring(bunch, ring, numerics):
-    """kappa_x, kappa_y (2, K) at the rows of the optics, the same varied by the doubt, by closed form or None, and the method."""
+    """kappa_x, kappa_y (2, K) at the rows of the optics, the same varied by the doubt, by closed form or None, and
+    the method.
+    """
     sizes = local_sizes(bunch, ring.optics)
     if ring.optics.tabulated:
         numerics = replace(numerics, charges_per_probe=min(ALONG_TABLE, numerics.charges_per_probe))

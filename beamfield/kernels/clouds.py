@@ -1,13 +1,12 @@
 """Charges that each stand for many: small clouds of fourth order, round or drawn out along z, in uniform motion.
 
-A round cloud of size a has, in its rest frame, the field r (r^2 + 5/2 a^2) / (r^2 + a^2)^(5/2): its second moment vanishes, so
-that it blurs a smooth bunch by a^4 only. A rod spreads such clouds over 2 h along z; four thirds of a rod less one third
-of a rod twice as long has no second moment either.
+A round cloud of size a has, in its rest frame, the field r (r^2 + 5/2 a^2) / (r^2 + a^2)^(5/2): its second moment
+vanishes, so that it blurs a smooth bunch by a^4 only. A rod spreads such clouds over 2 h along z; four thirds of a
+rod less one third of a rod twice as long has no second moment either.
 """
 
 import math
 
-import numpy as np
 from numba import prange
 
 from beamfield.kernels.compiled import compiled
@@ -15,7 +14,9 @@ from beamfield.kernels.compiled import compiled
 
 @compiled(inline="always")
 def one_cloud(dx, dy, dz, ux, uy, uz, a2):
-    """E / gamma / (q / 4 pi eps0) of a round cloud of momentum u = gamma beta, seen now at (dx, dy, dz) from it [1/m^2]."""
+    """E / gamma / (q / 4 pi eps0) of a round cloud of momentum u = gamma beta, seen now at (dx, dy, dz) from it
+    [1/m^2].
+    """
     along = ux * dx + uy * dy + uz * dz
     r2 = dx * dx + dy * dy + dz * dz + along * along
     s2 = r2 + a2
@@ -25,7 +26,9 @@ def one_cloud(dx, dy, dz, ux, uy, uz, a2):
 
 @compiled(inline="always")
 def half_rod(rho2, z, a2):
-    """Field across over rho, and potential, of clouds spread from -infinity to z, less what both ends share; rest frame."""
+    """Field across over rho, and potential, of clouds spread from -infinity to z, less what both ends share; rest
+    frame.
+    """
     p2 = rho2 + a2
     s2 = p2 + z * z
     s = math.sqrt(s2)
@@ -35,7 +38,9 @@ def half_rod(rho2, z, a2):
 
 @compiled(parallel=True)
 def superpose_clouds(points, positions, weights, momenta, a2, out):
-    """Fill out (6, M) with sums of E and of u x E / gamma over round clouds, each with its momentum (3, N), in order."""
+    """Fill out (6, M) with sums of E and of u x E / gamma over round clouds, each with its momentum (3, N), in
+    order.
+    """
     for m in prange(points.shape[1]):
         x, y, z = points[0, m], points[1, m], points[2, m]
         ex = ey = ez = bx = by = bz = 0.0
@@ -56,7 +61,9 @@ def superpose_clouds(points, positions, weights, momenta, a2, out):
 
 @compiled(parallel=True)
 def superpose_rods(points, positions, weights, gamma, h, a2, out):
-    """Fill out (3, M) with lab E / gamma of rods of half length h, rest frame, that share one motion along z, in order."""
+    """Fill out (3, M) with lab E / gamma of rods of half length h, rest frame, that share one motion along z, in
+    order.
+    """
     for m in prange(points.shape[1]):
         x, y, z = points[0, m], points[1, m], points[2, m]
         ex = ey = ez = 0.0

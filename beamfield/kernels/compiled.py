@@ -1,5 +1,6 @@
 """The one way to compile a kernel: strict IEEE arithmetic, no lock held, kept on disk where a disk can be written."""
 
+from contextlib import suppress
 from pathlib import Path
 
 from numba import njit
@@ -37,7 +38,9 @@ event.register("numba:compile", _Tell())
 
 
 def _forget_stale():
-    """Drop machine code older than the newest kernel source: numba watches one file, and a kernel may inline another."""
+    """Drop machine code older than the newest kernel source: numba watches one file, and a kernel may inline
+    another.
+    """
     folder = Path(__file__).parent
     newest = max(path.stat().st_mtime for path in folder.glob("*.py"))
     for index in (folder / "__pycache__").glob("*.nbi"):
@@ -45,7 +48,5 @@ def _forget_stale():
             index.unlink(missing_ok=True)
 
 
-try:
+with suppress(OSError):  # a folder that cannot be written cannot be stale either
     _forget_stale()
-except OSError:
-    pass  # a folder that cannot be written cannot be stale either

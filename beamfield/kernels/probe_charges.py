@@ -1,18 +1,19 @@
 """Charges placed for each probe: the field of a bunch known as a density, as a sum of moving charges round the probe.
 
-In the frame of the bunch a charge stands at (rho cos phi, rho sin phi, rho sinh zeta) from the probe and carries the charge
-of its cell, n rho^2 cosh(zeta) drho dphi dzeta. The inverse square of its field and the size of its cell cancel: there is
-nothing to soften and no bias. Between the limits chosen here the density is smooth, so that Gauss nodes converge fast:
+In the frame of the bunch a charge stands at (rho cos phi, rho sin phi, rho sinh zeta) from the probe and carries the
+charge of its cell, n rho^2 cosh(zeta) drho dphi dzeta. The inverse square of its field and the size of its cell
+cancel: there is nothing to soften and no bias. Between the limits chosen here the density is smooth, so that Gauss
+nodes converge fast:
 
     phi    even in the angle that an elliptic section asks for; only directions that meet the bunch
-    rho    from where a ray enters the elliptic cylinder about the bunch to where it leaves it, even in asinh(rho / near):
+    rho    from where a ray enters the elliptic cylinder about the bunch to where it leaves it, even in asinh(rho /
+    near):
            `near` is how far along z the density is the same; the logarithm at the probe is mapped away
     zeta   in pairs above and below the probe as far as both reach, then the rest of the longer side
 """
 
 import math
 
-import numpy as np
 from numba import prange
 
 from beamfield.kernels.compiled import compiled
@@ -97,9 +98,9 @@ def probe_field(
     """Fill out (3, M) with lab E / gamma at probes (3, M), given in the frame of the bunch, per unit central density.
 
     scales (a, b, c), kinds (across, along): the density is profile(x2/a2 + y2/b2) profile(z2/c2);
-    azimuth (M, 2, K) and w_azimuth (M, K), directions for each probe in units of a and b; other nodes on (0, 1). `window`
-    rms lengths of a Gaussian are kept, and the charges of a coasting beam out to zeta = 2 window, where they add
-    e^(-4 window). A fourth row of out takes phi / gamma; a coasting beam has none.
+    azimuth (M, 2, K) and w_azimuth (M, K), directions for each probe in units of a and b; other nodes on (0, 1).
+    `window` rms lengths of a Gaussian are kept, and the charges of a coasting beam out to zeta = 2 window, where they
+    add e^(-4 window). A fourth row of out takes phi / gamma; a coasting beam has none.
     """
     a, b, c = scales
     across, along = kinds
