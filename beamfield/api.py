@@ -43,7 +43,7 @@ def evaluate(case, method=None):
     numerics = replace(case.numerics, method=method) if method else case.numerics
     findings = answer(case.bunch, case.surroundings, case.ring, numerics)
     verdicts = tuple(judge(limit, findings[limit.result].value) for limit in case.limits)
-    return Outcome(case.title, case.file, findings, verdicts, case.warnings, checks(case.bunch, findings))
+    return Outcome(case.title, case.file, findings, verdicts, case.warnings, checks(case.bunch, findings), case.bunch)
 
 
 def self_field(case, points):

@@ -27,7 +27,7 @@ def parabolic_field(points, semi_axes):
 
         E_x = 4 x [2 / (A (A + B)) - x^2 2 (2 A + B) / (3 A^3 (A + B)^2) - y^2 2 / (A B (A + B)^2)]
 
-    and the like for y, with A^2 = a^2 + lambda, B^2 = b^2 + lambda: the confocal integral is elementary in two dimensions.
+    and the like for y, with A^2 = a^2 + lambda, B^2 = b^2 + lambda: in two dimensions the integral is elementary.
     """
     a, b = _confocal_axes(points, semi_axes)
     x, y = points[:2]

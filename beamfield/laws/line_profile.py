@@ -12,26 +12,31 @@ _NODES, _WEIGHTS = np.polynomial.legendre.leggauss(24)
 
 
 def smoothed(profile, half, z, s):
-    """Value [1/m] and minus the slope [1/m^2] at z (M,) [m] of a line density smoothed by variance s [m^2]."""
+    """Values (K, M) [1/m] and minus the slopes (K, M) [1/m^2] at z (M,) [m] of a line density smoothed by variances
+    s (K,) [m^2], ascending."""
     if profile == "gaussian":
-        width = sqrt(half**2 + s)
+        width = np.sqrt(half**2 + s)[:, None]
         value = _bell(z / width) / width
         return value, value * z / width**2
-    return (_blurred if s > half**2 else _sharp)(profile, half, z, sqrt(s))
+    narrow, wide = _parted(s, half)
+    pairs = _sharp(profile, half, z, narrow[:, None]), _blurred(profile, half, z, wide[:, None])
+    return tuple(np.concatenate(parts) for parts in zip(*pairs))
 
 
 def centre_curvature(profile, half, s):
-    """Minus the second derivative at z = 0 [1/m^3]."""
+    """Minus the second derivatives (K,) [1/m^3] at z = 0 of a line density smoothed by variances s (K,) [m^2]."""
     if profile == "gaussian":
-        return _bell(0.0) / sqrt(half**2 + s) ** 3
-    root = sqrt(s)
-    if s > half**2:
-        t = _NODES * half / root
-        return float(np.sum(_WEIGHTS * _height(profile) * _bell(t) * (1.0 - t * t))) / root**3
-    t = half / root
-    if profile == "uniform":
-        return _bell(t) / root**3
-    return 3.0 / half**3 * (_half_erf(t) - t * _bell(t))
+        return _bell(0.0) / (half**2 + s) ** 1.5
+    narrow, wide = _parted(s, half)
+    t = half / narrow
+    flat = _bell(t) / narrow**3 if profile == "uniform" else 3.0 / half**3 * (_half_erf(t) - t * _bell(t))
+    t = half / wide[:, None] * _NODES
+    return np.concatenate([flat, (_height(profile) * _bell(t) * (1.0 - t * t)) @ _WEIGHTS / wide**3])
+
+
+def _parted(s, half):
+    """Widths of the smoothing, those within the line and those beyond it."""
+    return np.sqrt(s[s <= half**2]), np.sqrt(s[s > half**2])
 
 
 def _sharp(profile, half, z, root):
@@ -47,9 +52,9 @@ def _sharp(profile, half, z, root):
 
 def _blurred(profile, half, z, root):
     """Smoothing wider than the line, where the closed forms cancel: Gauss-Legendre over the line."""
-    t = (z[:, None] - half * _NODES) / root
-    bell = _WEIGHTS * _height(profile) * _bell(t) / root
-    return bell.sum(axis=1), (bell * t).sum(axis=1) / root
+    t = (z[:, None] - half * _NODES) / root[:, :, None]
+    bell = _height(profile) * _bell(t)
+    return bell @ _WEIGHTS / root, (bell * t) @ _WEIGHTS / root**2
 
 
 def _height(profile):

@@ -16,59 +16,65 @@ from beamfield.laws.cylinder import azimuths
 from beamfield.laws.line_profile import centre_curvature, smoothed
 
 _BELOW = 76.0  # at the end of a line the integrand falls as sqrt(s) only
+_BLOCK = 64
 
 
 def gaussian_section_field(points, across, longitudinal, half):
     """Field (3, M) [1/m^2] at points (3, M) [m]: Gaussian across, "uniform", "parabolic" or "gaussian" along."""
-    x2, squares = points[:2] ** 2, np.asarray(across, dtype=float)[:, None] ** 2
-    largest = max(squares.max(), half**2, np.square(points).sum(axis=0).max())
-    total = np.zeros(points.shape)
-    for s in lattice(min(squares.min(), half**2), largest, _BELOW):
-        reach = squares + s
-        section = STEP * s * np.exp(-0.5 * (x2 / reach).sum(axis=0)) / np.sqrt(reach.prod(axis=0))
-        line, fall = smoothed(longitudinal, half, points[2], s)
-        total[:2] += section * line * points[:2] / reach
-        total[2] += section * fall
-    return total
+    field = np.empty(points.shape)
+    for block in np.array_split(np.arange(points.shape[1]), points.shape[1] // _BLOCK + 1):
+        field[:, block] = _gaussian_section(points[:, block], across, longitudinal, half)
+    return field
 
 
 def axis_field(z, transverse, across, longitudinal, half):
     """E_z (M,) [1/m^2] at z (M,) [m] on the axis; transverse "gaussian", "kv" or "parabolic"."""
-    largest = max(*across, half, np.abs(z).max()) ** 2
-    nodes = lattice(min(*across, half) ** 2, largest, _BELOW)
-    return sum(STEP * s * section_density(transverse, across, s) * smoothed(longitudinal, half, z, s)[1] for s in nodes)
+    s = _variances(across, half, np.abs(z).max(initial=0.0))
+    return (STEP * s * section_density(transverse, across, s)) @ smoothed(longitudinal, half, z, s)[1]
 
 
 def product_gradient(transverse, across, longitudinal, half):
     """Slopes dE_i/dx_i (3,) [1/m^3] at the centre."""
-    origin = np.zeros(1)
-    total = np.zeros(3)
-    for s in lattice(min(*across, half) ** 2, max(*across, half) ** 2):
-        line = smoothed(longitudinal, half, origin, s)[0][0]
-        total[:2] += STEP * s * line * section_curvature(transverse, across, s)
-        total[2] += STEP * s * centre_curvature(longitudinal, half, s) * section_density(transverse, across, s)
-    return total
+    s = _variances(across, half)
+    line, bend = smoothed(longitudinal, half, np.zeros(1), s)[0][:, 0], centre_curvature(longitudinal, half, s)
+    section = section_density(transverse, across, s)
+    return np.array([*(section_curvature(transverse, across, s) @ (STEP * s * line)), section @ (STEP * s * bend)])
 
 
 def section_density(transverse, across, s):
-    """2 pi times the smoothed transverse density on the axis [1/m^2]."""
+    """2 pi times the transverse density on the axis, smoothed by variances s (K,) [m^2]: (K,) [1/m^2]."""
     a, b = across
     if transverse == "gaussian":
         return 1.0 / np.sqrt((a * a + s) * (b * b + s))
-    v = _directions(a, b)[2] / (2.0 * s)
+    v = _directions(a, b)[2] / (2.0 * s[:, None])
     flat = -np.expm1(-v) / v
-    return np.mean(flat if transverse == "kv" else 2.0 * (flat - _rising(v))) / s
+    return np.mean(flat if transverse == "kv" else 2.0 * (flat - _rising(v)), axis=1) / s
 
 
 def section_curvature(transverse, across, s):
-    """2 pi times minus the second derivatives (2,) of the smoothed transverse density on the axis [1/m^4]."""
+    """2 pi times minus the second derivatives of the same along x and y: (2, K) [1/m^4]."""
     a, b = across
     if transverse == "gaussian":
-        return 1.0 / np.sqrt((a * a + s) * (b * b + s)) / np.array([a * a + s, b * b + s])
+        return section_density(transverse, across, s) / np.array([a * a + s, b * b + s])
     cos2, sin2, d2 = _directions(a, b)
-    v = d2 / (2.0 * s)
+    v = d2 / (2.0 * s[:, None])
     weight = 2.0 * np.exp(-v) if transverse == "kv" else 4.0 * _rising(v)
-    return np.array([np.mean(cos2 * weight), np.mean(sin2 * weight)]) / s**2
+    return np.array([np.mean(cos2 * weight, axis=1), np.mean(sin2 * weight, axis=1)]) / s**2
+
+
+def _gaussian_section(points, across, longitudinal, half):
+    s = _variances(across, half, np.sqrt(np.square(points).sum(axis=0).max(initial=0.0)))
+    line, fall = smoothed(longitudinal, half, points[2], s)
+    reach_x, reach_y = (size**2 + s[:, None] for size in across)
+    bell = np.exp(-0.5 * (points[0] ** 2 / reach_x + points[1] ** 2 / reach_y))
+    section = STEP * s[:, None] * bell / np.sqrt(reach_x * reach_y)
+    across_sum = [x * (section * line / reach).sum(axis=0) for x, reach in ((points[0], reach_x), (points[1], reach_y))]
+    return np.array([*across_sum, (section * fall).sum(axis=0)])
+
+
+def _variances(across, half, farthest=0.0):
+    """Variances s (K,) [m^2] of the smoothing, for points no farther from the centre than `farthest` [m]."""
+    return lattice(min(*across, half) ** 2, max(*across, half, farthest) ** 2, _BELOW)
 
 
 def _directions(a, b):

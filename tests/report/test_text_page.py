@@ -84,7 +84,7 @@ def test_the_verdict_comes_first_in_words(outcome, verdict):
 
 def test_limits_show_their_margin():
     page = text_page(OVERFULL)
-    assert "met       |tune_shift_y| < 0.25                     0.243052   2.8 % left" in page
+    assert "met       |tune_shift_y| < 0.25                     0.243052   2.8 % to spare" in page
     assert "BROKEN    |tune_shift_x| < 0.2                      0.201346   0.67 % over" in page
 
 
