@@ -51,6 +51,7 @@ def test_potential_of_particles(sizes):
     )
 
 
+@pytest.mark.large
 @pytest.mark.parametrize(
     "bunch", [DENSITY, sampled(2000), sampled(2000, (1e-3, 1e-3, 0.1))], ids=["density", "clouds", "rods"]
 )

@@ -56,6 +56,7 @@ def test_a_sum_is_the_sum_of_its_charges():
     assert np.allclose(together, alone, rtol=0.0, atol=rounding * np.abs(alone).max())
 
 
+@pytest.mark.large
 @pytest.mark.parametrize("gamma", [1.2, 2.0])
 def test_flux_after_a_bend_is_the_charge(gamma):
     """Closed form: Gauss, with light from all three pieces on one sphere; the jumps between them are transverse."""
@@ -140,6 +141,7 @@ def test_memory_length_longitudinal(beta):
     assert bent[2] < rounding
 
 
+@pytest.mark.large
 def test_the_field_across_a_bunch_settles():
     """Common practice, no source: the longer the straight flight, the nearer the co-moving field."""
     u, places = momentum(20.0), about((1e-3, 1e-3, 5e-3), 300)

@@ -24,6 +24,7 @@ def rayed(probes, scales, degree):
     return out
 
 
+@pytest.mark.large
 @LENGTHS
 def test_uniform_ellipsoid_inside_and_outside(length):
     """Closed form: Carlson's integrals; the rows of the field do not depend on the fourth."""
