@@ -69,7 +69,8 @@ def load(path):
     """Case of a file; InputError with every fault found in it, each with its line and column."""
     path = Path(path)
     try:
-        data = path.read_bytes() if path.stat().st_size <= located.MOST_BYTES else b" " * (located.MOST_BYTES + 1)
+        with path.open("rb") as opened:
+            data = opened.read(located.MOST_BYTES + 1)
     except (OSError, ValueError) as error:
         raise InputError(Fault(f"cannot be read: {_reason(error)}", file=str(path))) from None
     return parse(located.decode(data, str(path)), str(path), path.parent)

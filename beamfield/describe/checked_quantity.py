@@ -34,7 +34,9 @@ def _ways(quantity, kind):
 
 def _unknown(quantity, kind):
     said, parts = excerpt(quantity.text), quantity.unit_text.split()
-    if "pi" in parts or "π" in parts:
+    if quantity.tolerance is not None and parts[:1] == ["%"]:
+        return f"{said}: write the tolerance in the unit of the number, as in '1.2 ± 0.1 nC'"
+    if kind.name == "emittance" and {"pi", "π"} & set(parts):
         return (
             f"{said}: the pi may be a factor or a reminder of an area; write the emittance as "
             f"'{quantity.number_text} mm mrad …', multiplied by pi if it is a factor"

@@ -3,6 +3,7 @@
 _CHAMBER, _CATHODE, _DISPERSION = "surroundings.chamber", "surroundings.cathode.at", "ring.optics.dispersion_x"
 _TAIL_ACROSS = 3.0  # rms sizes that must fit where a bunch has no edge
 _TAIL_ALONG = 2.0
+_SAME_MOMENTUM = 0.01  # relative difference that may be rounding, or a spread
 
 
 def contradictions(reading, bunch, surroundings, ring, beamline):
@@ -10,6 +11,7 @@ def contradictions(reading, bunch, surroundings, ring, beamline):
     _fits_chamber(reading, bunch, surroundings.chamber)
     _stands_before_cathode(reading, bunch, surroundings.cathode)
     _has_poles_outside(reading, surroundings)
+    _agrees_with_file(reading, bunch)
     if ring:
         _fits_ring(reading, bunch, ring)
         _uses_dispersion(reading, bunch, ring.optics)
@@ -49,6 +51,15 @@ def _stands_before_cathode(reading, bunch, distance):
         message = f"the bunch reaches through the cathode: {called} is {reach:.4g} m behind its centre"
         (reading.warn if bunch.extent(2) is None else reading.fault)(_CATHODE, message)
     return None
+
+
+def _agrees_with_file(reading, bunch):
+    if bunch.macro is None or bunch.macro.momenta is None:
+        return
+    mean = float(bunch.macro.momenta[2] @ bunch.macro.weights)
+    if abs(mean / bunch.beta_gamma - 1.0) > _SAME_MOMENTUM:
+        said = f"gamma beta = {bunch.beta_gamma:.5g}, while the mean uz of the particle file is {mean:.5g}"
+        reading.warn("bunch.energy", f"comes to {said}")
 
 
 def _fits_ring(reading, bunch, ring):

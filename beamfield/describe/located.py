@@ -20,7 +20,7 @@ _TAB = re.compile(r"^[^#\t\n]*\t", re.MULTILINE)
 def decode(data, file):
     """Bytes of a file as text; InputError, located, where they are no plain UTF-8 of reasonable size."""
     if len(data) > MOST_BYTES:
-        _refuse(f"{len(data)} bytes; a case has at most {MOST_BYTES}", file)
+        _refuse(f"is larger than {MOST_BYTES} bytes, which no case needs", file)
     if data[:2] in (b"\xff\xfe", b"\xfe\xff"):
         _refuse("this is UTF-16; save it as UTF-8", file)
     if data[:3] == b"\xef\xbb\xbf":
@@ -49,7 +49,7 @@ def _refuse(message, file, line=1, column=1):
 
 def _check_signs(text, file):
     if len(text) > MOST_BYTES:
-        _refuse(f"{len(text)} characters; a case has at most {MOST_BYTES}", file)
+        _refuse(f"is larger than {MOST_BYTES} bytes, which no case needs", file)
     if not text.strip():
         _refuse(_EMPTY, file)
     strange = _CONTROL.search(text)

@@ -40,7 +40,7 @@ class Reading:
 
     def fault(self, key, message, place=None):
         """Complain about a key, at its own place unless another is given."""
-        self.faults.append(Fault(message, key, *(place or self.place(key)), self.file))
+        self._say([Fault(message, key, *(place or self.place(key)), self.file)])
 
     def warn(self, key, message):
         self.warnings.append(f"{key}: {message}")
@@ -52,12 +52,12 @@ class Reading:
         try:
             return function(*arguments, **options)
         except InputError as error:
-            self.faults.extend(self._placed(fault, key) for fault in error.faults)
+            self._say([self._placed(fault, key) for fault in error.faults])
         return None
 
     def _placed(self, fault, key):
-        """A fault of another file stays where it is; one without a place is put at the key."""
-        return fault if fault.line else Fault(fault.message, key, *self.place(key), self.file)
+        """A fault of another file stays where it is; one without a line is put at the key."""
+        return fault if fault.line else Fault(str(fault), key, *self.place(key), self.file)
 
     def text(self, key):
         """The text of a scalar, or None."""
@@ -102,21 +102,22 @@ class Reading:
         if quantity:
             self.quantities[key] = quantity
 
+    def _say(self, faults):
+        self.faults.extend(faults)
+        if len(self.faults) > _MOST_FAULTS:
+            self.finish()
+
     def finish(self):
-        """Raise InputError with all faults, in the order of their places, where there are any."""
-        if self.faults:
-            faults = sorted(
-                dict.fromkeys(self.faults), key=lambda fault: (fault.file != self.file, fault.line, fault.column)
-            )
-            raise InputError(*faults[:_MOST_FAULTS], *_rest(faults[_MOST_FAULTS:]))
-
-
-def _rest(faults):
-    return [Fault(f"and {len(faults)} more faults", "", *_at(faults[0]))] if faults else []
-
-
-def _at(fault):
-    return fault.line, fault.column, fault.file
+        """Raise InputError with the faults found, in the order of their places, where there are any."""
+        if not self.faults:
+            return
+        faults = sorted(
+            dict.fromkeys(self.faults), key=lambda fault: (fault.file != self.file, fault.line, fault.column)
+        )
+        if len(faults) > _MOST_FAULTS:
+            last = faults[_MOST_FAULTS]
+            faults[_MOST_FAULTS:] = [Fault("and more; mend these first", "", last.line, last.column, last.file)]
+        raise InputError(*faults)
 
 
 def _text(text, _):

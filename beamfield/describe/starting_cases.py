@@ -98,7 +98,7 @@ STARTING_CASES = {  # kind -> (what it shows, the case as nested texts)
                 "intensity": "0.9 nC",
                 "shape": {"particles": "macro.csv"},
             },
-            "limits": ['"peak_field_x < 1 MV/m"'],
+            "limits": ['"peak_field_x < 5 MV/m"'],
             "numerics": {"seed": "1"},
         },
     ),

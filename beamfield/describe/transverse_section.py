@@ -24,7 +24,8 @@ def _one_emittance(reading, key, form, beta_gamma):
     if form is None or quantity is None or beta_gamma is None:
         return None
     shape = None if isinstance(form, MacroParticles) else form
-    return reading.within(key, reading.attempt(key, emittance_word.geometric_rms, quantity, shape, beta_gamma))
+    rms = reading.attempt(key, emittance_word.geometric_rms, quantity, shape=shape, beta_gamma=beta_gamma)
+    return reading.within(key, rms)
 
 
 def sizes(reading, shape, emittances, spread, ring, beamline):

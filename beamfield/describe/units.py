@@ -75,13 +75,15 @@ _WHOLE = {
     "particles": _unit(particle=1),
     "particle": _unit(particle=1),
 }
-_JOINED = {"Tm": "T m", "mrad mm": "mm mrad"}  # nobody measures in terametres
+_JOINED = {"Tm": "T m"}  # nobody measures in terametres
 
 
 @lru_cache(maxsize=512)
 def unit(text):
     """The Unit that a text means ('' is a plain number), or None for one that is not known."""
     text = _JOINED.get(text, text).translate(_SIGNS)
+    if "%" in text and text != "%":
+        return None  # a hundredth of a volt is written otherwise, and '1.2 ± 10 % V' means something else
     above, slash, below = text.partition("/")
     parts = [_product(above or "1"), _product(below) if slash else PLAIN]
     return None if None in parts else parts[0].times(parts[1], -1)

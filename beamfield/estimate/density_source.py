@@ -11,6 +11,8 @@ from beamfield.estimate.probe_rule import azimuth_nodes, height_nodes, ray_rule,
 from beamfield.estimate.textbook import filling, rest_scales
 
 COARSER = 7.0 / 8.0  # nodes of the coarser rule in each direction: its error stands for the doubt, and covers it
+COARSER_RAYS = 3.0 / 4.0  # the same where the error falls only as a power of the nodes
+PANCAKE = 0.03  # rest-frame aspect below which an ellipsoid is seen by azimuth first also from outside
 _CODES = {"gaussian": 0, "kv": 1, "uniform": 1, "parabolic": 2, "coasting": 3}
 _AREAS = {"gaussian": 2.0 * pi, "kv": pi, "parabolic": pi / 2.0}
 _LENGTHS = {"gaussian": sqrt(2.0 * pi), "uniform": 2.0, "parabolic": 4.0 / 3.0, "coasting": 1.0}
@@ -34,7 +36,8 @@ class DensitySource:
     @property
     def fields(self):
         rule = self.rule
-        return partial(density_field, self.bunch, rule), partial(density_field, self.bunch, rule.thinned(COARSER))
+        coarser = rule.thinned(COARSER_RAYS if self.bunch.shape.ellipsoid else COARSER)
+        return partial(density_field, self.bunch, rule), partial(density_field, self.bunch, coarser)
 
     @property
     def rule(self):
@@ -69,17 +72,35 @@ def density_map(bunch, rule, points):
 
 
 def _sum(bunch, rule, probes):
-    from beamfield.kernels import probe_charges, probe_rays
+    scales = tuple(float(scale) for scale in rest_scales(bunch))
+    return (_of_ellipsoid if bunch.shape.ellipsoid else _of_product)(bunch, rule, probes, scales)
+
+
+def _of_product(bunch, rule, probes, scales):
+    from beamfield.kernels import probe_charges
 
     shape, out = bunch.shape, np.empty((4, probes.shape[1]))
-    scales = tuple(float(scale) for scale in rest_scales(bunch))
-    edged = shape.transverse != "gaussian"
-    directions, weights = azimuth_nodes(probes, scales, rule.azimuth, edged, shape.ellipsoid)
-    if shape.ellipsoid:
-        degree = 2 if shape.transverse == "parabolic" else 0
-        probe_rays.ray_field(probes, scales, degree, directions, weights, *height_nodes(rule), bunch.gamma, out)
-    else:
-        kinds = (_CODES[shape.transverse], _CODES[shape.longitudinal])
-        nodes = (*unit_nodes(rule.radial), *height_nodes(rule))
-        probe_charges.probe_field(probes, scales, kinds, rule.window, directions, weights, *nodes, bunch.gamma, out)
+    kinds = (_CODES[shape.transverse], _CODES[shape.longitudinal])
+    azimuth = azimuth_nodes(probes, scales, rule.azimuth, shape.transverse != "gaussian")
+    nodes = (*azimuth, *unit_nodes(rule.radial), *height_nodes(rule))
+    probe_charges.probe_field(probes, scales, kinds, rule.window, *nodes, bunch.gamma, out)
+    return out
+
+
+def _of_ellipsoid(bunch, rule, probes, scales):
+    from beamfield.kernels import probe_cone, probe_rays
+
+    degree, out = (2 if bunch.shape.transverse == "parabolic" else 0), np.empty((4, probes.shape[1]))
+    outside = np.square(probes / np.array(scales)[:, None]).sum(axis=0) > 1.0
+    coned = outside if bunch.aspect > PANCAKE else np.zeros_like(outside)
+    for chosen, by_slope in ((coned, True), (~coned, False)):
+        part = np.ascontiguousarray(probes[:, chosen])
+        found = np.empty((4, part.shape[1]))
+        if by_slope:
+            nodes = unit_nodes(rule.height // 4)
+            probe_cone.cone_field(part, scales, degree, rule.azimuth, *nodes, bunch.gamma, found)
+        else:
+            azimuth = azimuth_nodes(part, scales, rule.azimuth, edged=True)
+            probe_rays.ray_field(part, scales, degree, *azimuth, *height_nodes(rule), bunch.gamma, found)
+        out[:, chosen] = found
     return out

@@ -1,5 +1,6 @@
 """Mean of place times force over the bunch, <x E_x>, from the superposed field: what the rms envelope feels."""
 
+from dataclasses import replace
 from functools import lru_cache
 from math import pi
 
@@ -12,6 +13,7 @@ from beamfield.laws import intensity, rms_force
 
 NODES, FEWER = 7, 6  # across, round and along an octant of the bunch; the fewer show the error of the mean
 SAMPLE = 4096  # particles whose forces are averaged
+CHARGES = 8192  # a probe: the mean over the bunch is known to fewer digits than one field
 
 
 def space_charge_ratio(bunch, surroundings, ring, numerics):
@@ -28,7 +30,7 @@ def space_charge_ratio(bunch, surroundings, ring, numerics):
 
 
 def _mean_forces(bunch, numerics):
-    source = source_of(bunch, numerics)
+    source = source_of(bunch, replace(numerics, charges_per_probe=min(CHARGES, numerics.charges_per_probe)))
     points, weights = _nodes(bunch, NODES)
     fewer, lighter = _nodes(bunch, FEWER)
     bend = intensity.acceleration(1.0, bunch.species.charge, bunch.species.mass, bunch.beta_gamma)

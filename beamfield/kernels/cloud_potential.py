@@ -1,7 +1,7 @@
 """The potentials of the clouds and rods that stand for many charges each: the twins of their fields.
 
-A round cloud of size a has, in its rest frame, the potential (r^2 + 3/2 a^2) / (r^2 + a^2)^(3/2). A rod has its mean over
-2 h along z: four thirds of one, less one third of one twice as long.
+A round cloud of size a has, in its rest frame, the potential (r^2 + 3/2 a^2) / (r^2 + a^2)^(3/2). A rod has its mean
+over 2 h along z: four thirds of one, less one third of one twice as long.
 """
 
 import math

@@ -12,10 +12,8 @@ the same.
 import numpy as np
 
 STEP = 0.25  # in ln s: the trapezoidal rule errs by exp(-pi^2 / STEP) < 1e-17 where rho is bounded for |arg s| < pi/2
-_BELOW, _ABOVE = (
-    40.0,
-    38.0,
-)  # ln s runs so far below the smallest and above the largest scale; both tails are under 1e-16
+_BELOW = 40.0  # ln s starts so far below the smallest scale
+_ABOVE = 38.0  # and ends so far above the largest: both tails are under 1e-16
 _ROUNDS = 60
 
 

@@ -12,18 +12,18 @@ practice.)
 
 import numpy as np
 
-_STEPS = (0.25, 0.125, 0.0625, 0.03125, 0.015625)  # of the rule round the edge; halved until two agree
-_AGREE = 1e-9  # the error of the finer of two rules is the square of this
-_REACH = 74.0  # of the hyperbolic sine: beyond it 1e-15 of the edge is left
+_STEPS = (0.5, 0.25, 0.125, 0.0625, 0.03125, 0.015625)  # of the rule round the edge; halved until two agree
+_AGREE = 1e-8  # the error of the finer of two rules is the square of this
+_REST = 1e-17  # part of the edge left beyond the last nodes
 _SHARPEST = 1e-15
-_BLOCK = 256
+_BLOCK = 32
 
 
 def uniform_cylinder_field(points, half_axes):
     """Field (3, M) [1/m^2] at points (3, M) [m], anywhere; half_axes (a, b, l) [m]. The rim itself is a singular line.
 
     The trapezoidal rule round the edge, its nodes crowded about the part next to the point and its step halved until
-    two rules agree; good to rounding of the largest field, so that a point very near the centre has fewer digits.
+    two rules agree; the parts of the edge cancel near the centre, so that a point within 1e-6 of it has fewer digits.
     """
     a, b, length = half_axes
     points = np.asarray(points, dtype=float)
@@ -91,9 +91,12 @@ def _edge_sum(points, half_axes, step):
     cos, sin = -np.sin(eta), np.cos(eta)
     dx, dy = a * cos - x, b * sin - y
     d2 = np.maximum(dx**2 + dy**2, (_SHARPEST * b) ** 2)
-    across = weight * (np.arcsinh((length - z) / np.sqrt(d2)) + np.arcsinh((length + z) / np.sqrt(d2)))
-    near, far = (1.0 / (np.sqrt(d2 + u**2) + np.abs(u)) for u in (length - z, length + z))
-    along = weight * (dx * b * cos + dy * a * sin) * (near - far)
+    near, far = np.abs(length - np.abs(z)), length + np.abs(z)
+    r_near, r_far = np.sqrt(d2 + near**2), np.sqrt(d2 + far**2)
+    inside = np.arcsinh(near / np.sqrt(d2)) + np.arcsinh(far / np.sqrt(d2))
+    beyond = np.log1p(2.0 * length * (1.0 + 2.0 * np.abs(z) / (r_near + r_far)) / (near + r_near))
+    across = weight * np.where(np.abs(z) <= length, inside, beyond)
+    along = weight * np.sign(z) * (dx * b * cos + dy * a * sin) * (1.0 / (r_near + near) - 1.0 / (r_far + far))
     return np.stack([(across * b * cos).sum(1), (across * a * sin).sum(1), along.sum(1)]) / (
         2.0 * np.pi * a * b * length
     )
@@ -111,7 +114,8 @@ def _nodes(points, a, b, step):
     depth = np.abs(np.hypot(x / a, y / b) - 1.0) * np.hypot(a * cos, b * sin) / np.hypot(a * sin, b * cos)
     start = np.arctan2(-cos, stretch * sin)
     width = np.clip(0.5 * depth * _slope(start, stretch) ** -1, _SHARPEST, 1.0)
-    tau = step * np.arange(-np.ceil(_REACH / step), np.ceil(_REACH / step) + 1.0)
+    count = np.ceil(np.arcsinh(1.0 / (_REST * width.min(initial=1.0))) / step)
+    tau = step * np.arange(-count, count + 1.0)
     v = width * np.sinh(tau)
     theta = start + 2.0 * np.arctan(v)
     weight = step * 2.0 * width * np.cosh(tau) / (1.0 + v * v) * _slope(theta, stretch)

@@ -13,7 +13,7 @@ import numpy as np
 
 from beamfield.laws.confocal import confocal_integral, confocal_root
 
-_CANCELLED = 1e-3  # a difference this small against its terms is found by the integral instead
+_CANCELLED = 1e-2  # a difference this small against its terms is found by the integral instead
 
 
 def kv_field(points, semi_axes):

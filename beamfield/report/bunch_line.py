@@ -19,7 +19,7 @@ def _what(bunch):
 def _size(bunch):
     x, y, z = (brief(size, "m") for size in bunch.sigma)
     size = f"{x} × {y} rms, no ends" if isinf(bunch.sigma[2]) else f"{x} × {y} × {z} rms"
-    spread = f"momentum spread {brief(bunch.momentum_spread)} rms" if bunch.momentum_spread else None
+    spread = f"dp/p {brief(bunch.momentum_spread)} rms" if bunch.momentum_spread else None
     return size, _emittance(bunch), spread
 
 

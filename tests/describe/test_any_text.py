@@ -44,7 +44,7 @@ def judge(function, *arguments):
     assert all(fault.line > 0 and fault.column > 0 for fault in complaints(function, *arguments))
 
 
-@settings(max_examples=400, deadline=None)
+@settings(max_examples=200, deadline=None)
 @given(st.data())
 def test_mutations(data):
     """One to four cuts of a case that loads, each with another text in its place."""
@@ -56,7 +56,7 @@ def test_mutations(data):
     judge(parse, text)
 
 
-@settings(max_examples=400, deadline=None)
+@settings(max_examples=200, deadline=None)
 @given(st.dictionaries(st.sampled_from(KEY_NAMES), st.sampled_from(TOKENS) | st.text(max_size=12), max_size=4))
 def test_other_values(values):
     """Up to four keys of the vocabulary with any text; a key under a scalar leads nowhere, which has no line."""
@@ -64,7 +64,7 @@ def test_other_values(values):
     assert all(fault.line > 0 or "leads to no place" in fault.message for fault in found)
 
 
-@settings(max_examples=300, deadline=None)
+@settings(max_examples=150, deadline=None)
 @given(st.sampled_from(SCALARS), st.floats(allow_nan=False, allow_infinity=False), st.sampled_from(UNITS))
 def test_any_number(key, number, unit):
     """Any float with any unit at any key."""
@@ -81,11 +81,17 @@ def _inside(inner):
     return st.lists(inner, max_size=3) | st.dictionaries(NAMES, inner, max_size=4)
 
 
-@settings(max_examples=300, deadline=None)
+@settings(max_examples=150, deadline=None)
 @given(st.recursive(st.text("ab01.: ", max_size=6), _inside, max_leaves=12))
 def test_any_structure(data):
     """Trees of any shape, as JSON, which is YAML."""
     judge(parse, json.dumps(data))
+
+
+def test_a_hundred_faults_are_enough():
+    found = complaints(parse, TEXT + "".join(f"key{number}: 1\n" for number in range(50_000)))
+    assert len(found) == 101
+    assert found[-1].message == "and more; mend these first"
 
 
 def test_the_case_itself_is_one():

@@ -92,7 +92,7 @@ def test_no_such_file(tmp_path, name):
 def test_a_file_too_large(tmp_path):
     path = tmp_path / "large.yaml"
     path.write_bytes(b"#" * 1_000_001)
-    with pytest.raises(InputError, match="at most 1000000"):
+    with pytest.raises(InputError, match="larger than 1000000 bytes"):
         load(path)
 
 
@@ -198,6 +198,10 @@ def test_macro_particles(tmp_path):
     whole = case(*words, folder=tmp_path)
     assert whole.bunch.shape is None
     assert whole.bunch.sigma == pytest.approx((1e-3 / sqrt(3), 2e-3 / sqrt(3), sqrt(3)), rel=ROUNDING)
+    assert whole.bunch.emittance == case().bunch.emittance
+    assert "a particle file does not say what '95%' holds" in fault(
+        ("y: 2.5 um normalised rms", "y: 2.5 um normalised 95%"), *words, folder=tmp_path
+    )
     assert whole.bunch.macro is case(*words, folder=tmp_path).bunch.macro, "a file that did not change is read once"
 
 

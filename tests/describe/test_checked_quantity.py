@@ -84,6 +84,11 @@ def test_complete(kind, text):
             "'1.2' has no unit; write a charge such as '1.2 nC', a count such as '3e11 particles' or a current such as "
             "'1.2 A peak' (or mean)",
         ),
+        (
+            "intensity",
+            "1.2 ± 10 % nC",
+            "'1.2 ± 10 % nC': write the tolerance in the unit of the number, as in '1.2 ± 0.1 nC'",
+        ),
         ("intensity", "40 A", "'40 A' does not say what it measures; write '40 A peak' (or mean)"),
         ("intensity", "1.2 nC peak", "'1.2 nC peak': 'peak' does not go with an intensity in nC; write '1.2 nC'"),
         (

@@ -174,6 +174,22 @@ def test_particle_file_and_sizes(tmp_path):
     ]
 
 
+def test_particle_file_and_energy(tmp_path):
+    (tmp_path / "macro.csv").write_text("x,y,z,ux,uy,uz\n1,1,1,0,0,5\n-1,-1,-1,0,0,5\n")
+    sizes = "  size: {x: 1 mm rms, y: 1 mm rms, z: 1 mm rms}\n"
+    file = ("shape: gaussian", "shape: {particles: macro.csv}"), (sizes, "")
+    said = "bunch.energy: comes to gamma beta = 19.975, while the mean uz of the particle file is 5"
+    assert warnings(*file, text=BUNCH, folder=tmp_path) == [said]
+    assert warnings(*file, ("gamma 20", "gamma 5.1"), text=BUNCH, folder=tmp_path) == []
+
+
+def test_a_fault_without_a_line_in_a_named_file_is_put_at_its_key(tmp_path):
+    path = tmp_path / "macro.csv"
+    path.write_text("x,y,z\n1,2,3\n")
+    (line,) = faults(("shape: gaussian", "shape: {particles: macro.csv}"), (f"  {SIZES}\n", ""), folder=tmp_path)
+    assert line.startswith(f"ring.yaml:6:22: bunch.shape.particles: {path}: ")
+
+
 def test_a_missing_file_and_the_name_beside_it(tmp_path):
     (tmp_path / "macro.csv").write_text("x,y,z\n")
     line = fault(("shape: gaussian", "shape: {particles: marco.csv}"), folder=tmp_path)

@@ -2,7 +2,7 @@
 
 import subprocess
 import sys
-from time import perf_counter
+from time import process_time
 
 from tests.describe.ring_case import case
 
@@ -19,7 +19,7 @@ def test_imports():
 def test_ten_thousand_variants_are_feasible():
     """A bound, not a benchmark: a variant took 0.7 ms; 20 ms would make 10 000 of them 200 s."""
     whole = case()
-    start = perf_counter()
+    start = process_time()
     for number in range(1, 51):
         whole.varied({"bunch.intensity": f"{number}e10 particles"})
-    assert (perf_counter() - start) / 50 < 0.02
+    assert (process_time() - start) / 50 < 0.02

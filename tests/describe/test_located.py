@@ -1,6 +1,6 @@
 """YAML without its surprises: text stays text, places are kept, and what is more than plain data is refused."""
 
-from time import perf_counter
+from time import process_time
 
 import pytest
 import yaml
@@ -73,7 +73,7 @@ def test_places_count_from_one():
             'f:1:4: text with a bar begins a block in YAML; write the limit in quotes: "|tune_shift_y| < 0.25"',
         ),
         ("[" * 40, "f:1:14: deeper than any case is"),
-        ("x" * (MOST_BYTES + 1), "f:1:1: 1000001 characters; a case has at most 1000000"),
+        ("x" * (MOST_BYTES + 1), "f:1:1: is larger than 1000000 bytes, which no case needs"),
     ],
 )
 def test_refused(text, line):
@@ -94,7 +94,7 @@ def test_all_are_said_together():
         (b"\xff\xfea\x00", "f:1:1: this is UTF-16; save it as UTF-8"),
         (b"\xef\xbb\xbfa: 1", "f:1:1: begins with a byte-order mark; save it as UTF-8 without one"),
         (b"a: 1\nb: \xb5m", "f:2:4: this is not UTF-8 text"),
-        (b" " * (MOST_BYTES + 1), "f:1:1: 1000001 bytes; a case has at most 1000000"),
+        (b" " * (MOST_BYTES + 1), "f:1:1: is larger than 1000000 bytes, which no case needs"),
     ],
 )
 def test_bytes(data, line):
@@ -118,9 +118,9 @@ def test_the_same_words_without_the_c_parser(text, monkeypatch):
 )
 def test_hostile_texts_are_refused_in_reasonable_time(text):
     """Bounds, not benchmarks: a quadratic search over a megabyte would take minutes."""
-    start = perf_counter()
+    start = process_time()
     complaints(read, text)
-    assert perf_counter() - start < 10.0
+    assert process_time() - start < 10.0
 
 
 @given(st.text(max_size=200))

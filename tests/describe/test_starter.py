@@ -7,7 +7,7 @@ from beamfield.describe.starter import KINDS_OF_CASE, starter
 from beamfield.describe.vocabulary import KEYS
 from beamfield.errors import InputError
 
-MACRO = "x,y,z,ux,uy,uz\n1e-3,0,0,0,0,0.6\n-1e-3,1e-3,0,0,0,0.6\n0,-1e-3,1e-2,0,0,0.6\n0,0,-1e-2,0,0,0.6\n"
+MACRO = "x,y,z,ux,uy,uz\n1e-3,0,0,0,0,0.607\n-1e-3,1e-3,0,0,0,0.607\n0,-1e-3,1e-2,0,0,0.607\n0,0,-1e-2,0,0,0.607\n"
 
 
 @pytest.mark.parametrize("kind", KINDS_OF_CASE)

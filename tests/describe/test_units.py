@@ -75,7 +75,7 @@ def test_what_is_kept_apart(one, other):
 
 
 @pytest.mark.parametrize(
-    "text", ["mev", "MM", "parsec", "m//s", "m/s/s", "/", "m2.5", "m-1", "5", "kdeg", "k%", "mkg", "ü"]
+    "text", ["mev", "MM", "parsec", "m//s", "m/s/s", "/", "m2.5", "m-1", "5", "kdeg", "% nC", "1/%", "k%", "mkg", "ü"]
 )
 def test_unknown(text):
     assert unit(text) is None

@@ -132,7 +132,7 @@ def test_long_bunch_is_a_beam():
 
 
 def test_potentials():
-    """Limit: field is minus the slope of the potential; at the centre the three shapes order by their cores."""
+    """Limit: field is minus the slope of the potential, inside and outside."""
     step = 1e-4
     points = cloud()
     for axis in range(3):

@@ -15,7 +15,7 @@ from beamfield.laws.product import gaussian_section_field
 
 REFERENCE = Path(__file__).parents[1] / "reference"
 QUADRATURE = 1e-12  # of the field's length: shapes from 1e-4 to 1e5, sections to 10, in, on and out of the surface
-RIM = 2e-12  # cylinders: the edge of a flat one is a thousand times nearer than it is wide
+ROUND_THE_EDGE = 1e-11  # cylinders: across a needle or a pancake the parts of the edge cancel to 1e-5 of themselves
 
 
 def rows(table):
@@ -63,4 +63,4 @@ def test_long_beams(law, field):
 
 def test_cylinders():
     """Closed form: superposition of rectangular sheets in mpmath."""
-    assert worst("cylinder_fields.csv", "cylinder", uniform_cylinder_field) < RIM
+    assert worst("cylinder_fields.csv", "cylinder", uniform_cylinder_field) < ROUND_THE_EDGE

@@ -64,7 +64,7 @@ def test_perveance_is_the_defocusing_of_a_long_beam(beta_gamma):
 
 
 def test_plasma_wavelength():
-    """Closed form: 2 pi beta c / omega_p, omega_p^2 = q^2 n / (eps0 gamma^3 m), at the density of a uniform ellipsoid."""
+    """Closed form: 2 pi beta c / omega_p, omega_p^2 = q^2 n / (eps0 gamma^3 m), at a uniform ellipsoid's density."""
     beta_gamma, particles, axes = 0.8, 1e10, np.array([1e-3, 3e-3, 2e-2])
     gamma = sqrt(1.0 + beta_gamma**2)
     rest = uniform_ellipsoid_gradient(axes * [1.0, 1.0, gamma])
