@@ -6,12 +6,13 @@ from beamfield.estimate.catalogue import CATALOGUE, QUESTIONS
 
 UNITS = {"1", "C", "A", "m", "V", "ohm", "deg", "1/m", "1/m2", "V/m", "V/m2", "T m", "eV/c", "eV/m", "rad/m"}
 NEEDS = {"bunch", "ring", "emittance", "density"}
-FIRST = (
-    "gamma beta momentum rigidity particles bunch_charge peak_current peak_line_density bunching_factor perveance "
-    "field_gradient_x field_gradient_y field_gradient_z peak_field_x peak_field_y peak_field_z defocusing_x defocusing_y "
-    "defocusing_z peak_kick_x peak_kick_y peak_energy_change_z plasma_wavelength space_charge_ratio_x "
-    "space_charge_ratio_y tune_shift_x tune_shift_y memory_length_transverse memory_length_longitudinal"
-).split()
+FIRST = [
+    *("gamma", "beta", "momentum", "rigidity", "particles", "bunch_charge", "peak_current", "peak_line_density"),
+    *("bunching_factor", "perveance", "field_gradient_x", "field_gradient_y", "field_gradient_z"),
+    *("peak_field_x", "peak_field_y", "peak_field_z", "defocusing_x", "defocusing_y", "defocusing_z"),
+    *("peak_kick_x", "peak_kick_y", "peak_energy_change_z", "plasma_wavelength", "space_charge_ratio_x"),
+    *("space_charge_ratio_y", "tune_shift_x", "tune_shift_y", "memory_length_transverse", "memory_length_longitudinal"),
+]
 
 
 def test_promised_results():
