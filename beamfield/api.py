@@ -7,7 +7,8 @@ from beamfield import __version__
 from beamfield.constants import DATA_SET
 from beamfield.errors import BeamfieldError, InputError
 
-__all__ = ["BeamfieldError", "InputError", "check_page", "evaluate", "explain", "load", "load_all", "on_compile"]
+__all__ = ["BeamfieldError", "InputError", "check_page", "draw_map", "evaluate", "explain"]
+__all__ += ["field_against_straight", "load", "load_all", "map_table", "on_compile"]
 __all__ += ["report_page", "schema", "schema_page", "self_field", "starter", "superpose", "version_line"]
 
 
@@ -57,6 +58,30 @@ def superpose(points, positions, charges, momenta, cloud=0.0, method="auto", tol
     from beamfield.estimate import superposition
 
     return superposition.superpose(points, positions, charges, momenta, cloud, method, tolerance)
+
+
+def draw_map(case, path, over=(), at=(), method=None):
+    """Write the field, the force and the potentials of a case's bunch to a .csv, .npz, .h5, .vti or .png file.
+
+    over, texts such as 'x' or 'z = -40 .. 40 mm, 401', one an axis: a line, a plane or a box; at, 'y = 2 mm' elsewhere.
+    """
+    from beamfield.study import case_map
+
+    case_map.draw(case, path, over, at, method)
+
+
+def map_table(case, over=(), at=(), method=None):
+    """The same map as one CSV text."""
+    from beamfield.study import case_map
+
+    return case_map.table(case, over, at, method)
+
+
+def field_against_straight(points, positions, charges, beta_gamma, past, lengths):
+    """How the field settles with the length of straight flight out of a bend or from a cathode; see past_motion."""
+    from beamfield.estimate import past_motion
+
+    return past_motion.field_against_straight(points, positions, charges, beta_gamma, past, lengths)
 
 
 def report_page(outcomes, form="text", colour=False):

@@ -21,6 +21,16 @@ def check(options):
     return _ending(outcomes)
 
 
+def map(options):
+    case = api.load(options.case)
+    api.on_compile(lambda: notice(COMPILING))
+    if options.output:
+        api.draw_map(case, options.output, options.over or (), options.at or (), options.method)
+    else:
+        emit(api.map_table(case, options.over or (), options.at or (), options.method))
+    return Exit.DONE
+
+
 def explain(options):
     emit(api.explain(options.name))
     return Exit.DONE

@@ -58,6 +58,23 @@ _OUTPUT = (
 )
 _NAME = (("name",), {"nargs": "?", "metavar": "NAME", "help": "a result, such as tune_shift_y; none: list them all"})
 _KIND = (("kind",), {"nargs": "?", "metavar": "KIND", "help": "the kind of case; none: the plainest"})
+_CASE = (("case",), {"metavar": "CASE", "help": "case file"})
+_OVER = (
+    ("--over",),
+    {
+        "action": "append",
+        "metavar": "SPAN",
+        "help": "an axis to go along, 'x' or 'x = -15 .. 15 mm, 201'; two of them for a plane, three for a box",
+    },
+)
+_AT = (
+    ("--at",),
+    {"action": "append", "metavar": "PLACE", "help": "where to stay, 'y = 2 mm', on an axis not gone along; else 0"},
+)
+_MAP_FILE = (
+    ("-o", "--output"),
+    {"metavar": "FILE", "help": "FILE.csv, .npz, .h5, .vti or .png; without one, a table to standard output"},
+)
 
 COMMANDS = {
     "report": Command(
@@ -67,6 +84,11 @@ COMMANDS = {
         "CASE…",
         "hold cases against their limits: one line each, exit code 3 when one is broken",
         (_CASES, _FORMAT, _METHOD),
+    ),
+    "map": Command(
+        "CASE",
+        "field, force and potentials of a bunch on a line, plane or box",
+        (_CASE, _OVER, _AT, _METHOD, _MAP_FILE),
     ),
     "explain": Command("[NAME]", "define a result: formula, domain, source", (_NAME,)),
     "new": Command("[KIND]", "print a commented case to start from", (_KIND, _OUTPUT)),

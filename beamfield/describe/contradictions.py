@@ -3,11 +3,13 @@
 _CHAMBER, _CATHODE, _DISPERSION = "surroundings.chamber", "surroundings.cathode.at", "ring.optics.dispersion_x"
 _TAIL_ACROSS = 3.0  # rms sizes that must fit where a bunch has no edge
 _TAIL_ALONG = 2.0
+_FLATTEST = 1e4  # width over height, or the reverse
 _SAME_MOMENTUM = 0.01  # relative difference that may be rounding, or a spread
 
 
 def contradictions(reading, bunch, surroundings, ring, beamline):
     """Say as faults, or as warnings, what of the bunch does not go with what stands round it."""
+    _is_no_sheet(reading, bunch)
     _fits_chamber(reading, bunch, surroundings.chamber)
     _stands_before_cathode(reading, bunch, surroundings.cathode)
     _has_poles_outside(reading, surroundings)
@@ -23,6 +25,14 @@ def _reach(bunch, axis, tail):
     """Half extent [m] and how it is called: to the edge, or a number of rms sizes where there is none."""
     edge = bunch.extent(axis)
     return (tail * bunch.sigma[axis], f"{tail:g} rms") if edge is None else (edge, "its edge")
+
+
+def _is_no_sheet(reading, bunch):
+    flatness = max(bunch.sigma[:2]) / min(bunch.sigma[:2])
+    if flatness > _FLATTEST:
+        key = next(key for key in ("bunch.size", "bunch.emittance", "bunch.shape") if key in reading)
+        message = f"one of x and y is {flatness:.3g} times the other; at most {_FLATTEST:g}, far flatter than any beam"
+        reading.fault(key, message)
 
 
 def _fits_chamber(reading, bunch, chamber):

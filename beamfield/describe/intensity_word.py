@@ -9,6 +9,7 @@ from beamfield.errors import InputError
 _COUNT, _CHARGE = units.unit("particles").dimension, units.unit("C").dimension
 _MOST_COASTING = 1e17  # particles round a ring
 _DENSEST_COASTING = 1e15  # particles per metre
+_LONGEST_RING = 1e6  # m; where there is no ring, one particle in that length is the least
 
 
 @dataclass(frozen=True, slots=True)
@@ -80,6 +81,10 @@ def _from_mean(quantity, filling):
 
 def _sparse(density, quantity, circumference):
     """The line density itself, unless no ring holds such a beam."""
+    if density * (circumference or _LONGEST_RING) < 1.0:
+        raise InputError(
+            f"{excerpt(quantity.text)} comes to {density:.3g} particles a metre, less than one in the ring"
+        )
     if not density < _DENSEST_COASTING or density * (circumference or 0.0) > _MOST_COASTING:
         raise InputError(
             f"{excerpt(quantity.text)} comes to {density:.3g} particles a metre; at most {_DENSEST_COASTING:g}, and "

@@ -58,8 +58,13 @@ def central_density(bunch):
 
 def density_field(bunch, rule, points):
     """Lab E (3, M) [V/m] at lab points (3, M) about the centre of a bunch known as a density."""
+    return density_map(bunch, rule, points)[:3]
+
+
+def density_map(bunch, rule, points):
+    """Lab E [V/m] and, last, phi [V], (4, M), at lab points (3, M); phi of a coasting beam means nothing."""
     probes = np.ascontiguousarray(points * np.array([1.0, 1.0, bunch.gamma])[:, None], float)
-    out = np.empty_like(probes)
+    out = np.empty((4, probes.shape[1]))
     for first in range(0, probes.shape[1], _BLOCK):
         block = np.ascontiguousarray(probes[:, first : first + _BLOCK])
         out[:, first : first + _BLOCK] = _sum(bunch, rule, block)
@@ -74,7 +79,7 @@ def _sum(bunch, rule, probes):
 def _of_product(bunch, rule, probes, scales):
     from beamfield.kernels import probe_charges
 
-    shape, out = bunch.shape, np.empty_like(probes)
+    shape, out = bunch.shape, np.empty((4, probes.shape[1]))
     kinds = (_CODES[shape.transverse], _CODES[shape.longitudinal])
     azimuth = azimuth_nodes(probes, scales, rule.azimuth, shape.transverse != "gaussian")
     nodes = (*azimuth, *unit_nodes(rule.radial), *height_nodes(rule))
@@ -85,12 +90,12 @@ def _of_product(bunch, rule, probes, scales):
 def _of_ellipsoid(bunch, rule, probes, scales):
     from beamfield.kernels import probe_cone, probe_rays
 
-    degree, out = (2 if bunch.shape.transverse == "parabolic" else 0), np.empty_like(probes)
+    degree, out = (2 if bunch.shape.transverse == "parabolic" else 0), np.empty((4, probes.shape[1]))
     outside = np.square(probes / np.array(scales)[:, None]).sum(axis=0) > 1.0
     coned = outside if bunch.aspect > PANCAKE else np.zeros_like(outside)
     for chosen, by_slope in ((coned, True), (~coned, False)):
         part = np.ascontiguousarray(probes[:, chosen])
-        found = np.empty_like(part)
+        found = np.empty((4, part.shape[1]))
         if by_slope:
             nodes = unit_nodes(rule.height // 4)
             probe_cone.cone_field(part, scales, degree, rule.azimuth, *nodes, bunch.gamma, found)

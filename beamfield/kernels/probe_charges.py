@@ -54,10 +54,15 @@ def spread(x, inside, pancake):
 
 
 @compiled()
-def column(x, y, z, rho, c, top, weight, along, endless, many, w_many, few, w_few, gamma):
-    """Sum over the charges that stand above and below one place (x, y) from a probe at height z."""
+def column(x, y, z, rho, weight, line, heights, gamma):
+    """Field and potential of the charges that stand above and below one place (x, y) from a probe at height z.
+
+    The potential of a charge is its rest-frame field times its distance, taken along it: nothing new to compute.
+    """
+    c, top, along, endless = line
+    many, w_many, few, w_few = heights
     u = math.sqrt((gamma - 1.0) * (gamma + 1.0))
-    ex = ey = ez = 0.0
+    ex = ey = ez = phi = 0.0
     if along == COASTING:
         inner, outer, side = endless, endless, 1.0
     else:
@@ -83,7 +88,8 @@ def column(x, y, z, rho, c, top, weight, along, endless, many, w_many, few, w_fe
                 ex += charge * fx
                 ey += charge * fy
                 ez += charge * fz
-    return ex, ey, ez
+                phi -= charge * (x * fx + y * fy + gamma * dz * fz)
+    return ex, ey, ez, phi
 
 
 @compiled(parallel=True)
@@ -95,19 +101,20 @@ def probe_field(
     scales (a, b, c), kinds (across, along): the density is profile(x2/a2 + y2/b2) profile(z2/c2);
     azimuth (M, 2, K) and w_azimuth (M, K), directions for each probe in units of a and b; other nodes on (0, 1).
     `window` rms lengths of a Gaussian are kept, and the charges of a coasting beam out to zeta = 2 window, where they
-    add e^(-4 window).
+    add e^(-4 window). A fourth row of out takes phi / gamma; a coasting beam has none.
     """
     a, b, c = scales
     across, along = kinds
+    heights = (many, w_many, few, w_few)
     edge2 = window * window if across == GAUSSIAN else 1.0
     for m in prange(probes.shape[1]):
         px, py, z = probes[0, m] / a, probes[1, m] / b, probes[2, m]
         d2 = px * px + py * py
         inside = d2 < edge2
         pancake = c * c < a * b
-        top = c * (window if along == GAUSSIAN else 1.0)
+        line = (c, c * (window if along == GAUSSIAN else 1.0), along, 2.0 * window)
         near = max(abs(c - abs(z)), 0.15 * c) if along == FLAT else c
-        ex = ey = ez = 0.0
+        ex = ey = ez = phi = 0.0
         for i in range(azimuth.shape[2]):
             cos, sin = azimuth[m, 0, i], azimuth[m, 1, i]
             stretch = math.hypot(a * cos, b * sin)
@@ -125,23 +132,11 @@ def probe_field(
                 weight = profile(across, qx * qx + qy * qy) * a * b * r * dr * w_azimuth[m, i]
                 if weight > 0.0:
                     x, y = r * a * cos, r * b * sin
-                    fx, fy, fz = column(
-                        x,
-                        y,
-                        z,
-                        r * stretch,
-                        c,
-                        top,
-                        weight,
-                        along,
-                        2.0 * window,
-                        many,
-                        w_many,
-                        few,
-                        w_few,
-                        gamma,
-                    )
+                    fx, fy, fz, f = column(x, y, z, r * stretch, weight, line, heights, gamma)
                     ex += fx
                     ey += fy
                     ez += fz
+                    phi += f
         out[0, m], out[1, m], out[2, m] = ex, ey, ez
+        if out.shape[0] > 3:
+            out[3, m] = phi

@@ -16,12 +16,12 @@ from beamfield.kernels.probe_rays import STEEPEST, slopes, two_charges
 
 @compiled()
 def one_slope(p, v, turn, scales, degree, weight, count, u, gamma):
-    """Field of all charges at downward slope v, scaled, from p (p[2] >= 0); turn, angle of the way to the axis."""
+    """Field and potential of all charges at downward slope v, scaled, from p (p[2] >= 0); turn, angle of the axis."""
     d, beyond = math.hypot(p[0], p[1]), p[0] * p[0] + p[1] * p[1] + p[2] * p[2] - 1.0
-    ex = ey = ez = 0.0
+    ex = ey = ez = phi = 0.0
     reach = math.sqrt((1.0 + v * v) * beyond) - p[2] * v
     if reach >= d:
-        return ex, ey, ez
+        return ex, ey, ez, phi
     around = reach <= -d
     half = math.pi if around else math.acos(reach / d)
     squeeze = math.sqrt(scales[0] / scales[1])
@@ -37,11 +37,12 @@ def one_slope(p, v, turn, scales, degree, weight, count, u, gamma):
         cos, sin = math.cos(angle), squeeze * math.sin(angle)
         norm = 1.0 / math.sqrt(cos * cos + sin * sin)
         charge = weight * step * squeeze * norm * norm
-        fx, fy, fz = two_charges(p, cos * norm, sin * norm, -v, scales, degree, charge, u, gamma)
+        fx, fy, fz, f = two_charges(p, cos * norm, sin * norm, -v, scales, degree, charge, u, gamma)
         ex += fx
         ey += fy
         ez += fz
-    return ex, ey, ez
+        phi += f
+    return ex, ey, ez, phi
 
 
 @compiled(inline="always")
@@ -74,7 +75,7 @@ def cone_field(probes, scales, degree, count, nodes, weights, gamma, out):
         common = max(0.0, min(-low, everywhere))
         side = 1.0 if everywhere >= -low else -1.0
         ends = (max(common, low), everywhere) if side > 0.0 else (max(common, -everywhere), -low)
-        ex = ey = ez = 0.0
+        ex = ey = ez = phi = 0.0
         for part in range(3):
             if part == 0:
                 start, length = 0.0, common
@@ -90,10 +91,13 @@ def cone_field(probes, scales, degree, count, nodes, weights, gamma, out):
                 weight = a * b * c * unit * math.cosh(eta) * length * dx * weights[k]
                 for s in range(2 if part == 0 else 1):
                     sign = 1.0 if part == 2 else (side if s == 0 else -side)
-                    fx, fy, fz = one_slope(
+                    fx, fy, fz, f = one_slope(
                         p, sign * unit * math.sinh(eta), turn, scales, degree, weight, count, u, gamma
                     )
                     ex += fx
                     ey += fy
                     ez += fz
+                    phi += f
         out[0, m], out[1, m], out[2, m] = ex, ey, mirror * ez
+        if out.shape[0] > 3:
+            out[3, m] = phi

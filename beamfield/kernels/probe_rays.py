@@ -35,13 +35,13 @@ def slopes(d2, height, b, steepest):
 
 @compiled(inline="always")
 def two_charges(p, cos, sin, w, scales, degree, weight, u, gamma):
-    """Field of the two charges on the chord of one ray from p, all in scaled lengths; w, its slope."""
+    """Field and potential of the two charges on the chord of one ray from p, all in scaled lengths; w, its slope."""
     a, b, c = scales
     square = 1.0 + w * w
     along = p[0] * cos + p[1] * sin + p[2] * w
     beyond = p[0] * p[0] + p[1] * p[1] + p[2] * p[2] - 1.0
     root2 = along * along - square * beyond
-    ex = ey = ez = 0.0
+    ex = ey = ez = phi = 0.0
     if root2 > 0.0:
         root = math.sqrt(root2)
         first, last = max(0.0, (-along - root) / square), max(0.0, (root - along) / square)
@@ -53,7 +53,8 @@ def two_charges(p, cos, sin, w, scales, degree, weight, u, gamma):
             ex += charge * fx
             ey += charge * fy
             ez += charge * fz
-    return ex, ey, ez
+            phi -= charge * r * (a * cos * fx + b * sin * fy + gamma * w * c * fz)
+    return ex, ey, ez, phi
 
 
 @compiled(parallel=True)
@@ -62,6 +63,7 @@ def ray_field(probes, scales, degree, azimuth, w_azimuth, paired, w_paired, sing
 
     scales (a, b, c), semi-axes there; degree 0 or 2, density 1 or 1 - x2/a2 - y2/b2 - z2/c2 inside; azimuth (M, 2, K)
     and w_azimuth (M, K), directions for each probe in units of a and b; paired and single, nodes on (0, 1) for eta.
+    A fourth row of out takes phi / gamma.
     """
     a, b, c = scales
     u = math.sqrt((gamma - 1.0) * (gamma + 1.0))
@@ -70,7 +72,7 @@ def ray_field(probes, scales, degree, azimuth, w_azimuth, paired, w_paired, sing
         d2, height = p[0] * p[0] + p[1] * p[1], abs(p[2])
         inside = d2 + height * height <= 1.0
         down = -1.0 if p[2] >= 0.0 else 1.0
-        ex = ey = ez = 0.0
+        ex = ey = ez = phi = 0.0
         for i in range(azimuth.shape[2]):
             cos, sin = azimuth[m, 0, i], azimuth[m, 1, i]
             stretch = math.hypot(a * cos, b * sin)
@@ -99,8 +101,11 @@ def ray_field(probes, scales, degree, azimuth, w_azimuth, paired, w_paired, sing
                     weight = cell * math.cosh(eta) * length * dx * weights[k]
                     for s in range(2 - part):
                         w = slope * down * side * (1.0 if s == 0 else -1.0)
-                        fx, fy, fz = two_charges(p, cos, sin, w, scales, degree, weight, u, gamma)
+                        fx, fy, fz, f = two_charges(p, cos, sin, w, scales, degree, weight, u, gamma)
                         ex += fx
                         ey += fy
                         ez += fz
+                        phi += f
         out[0, m], out[1, m], out[2, m] = ex, ey, ez
+        if out.shape[0] > 3:
+            out[3, m] = phi

@@ -5,7 +5,7 @@ import pytest
 from beamfield.cli.usage import COMMANDS
 
 MISTAKES = {
-    "": "which command? One of report, check, explain, new, schema",
+    "": "which command? One of report, check, map, explain, new, schema",
     "reprot ring.yaml": "there is no command 'reprot'; did you mean 'report'?",
     "--verson": "there is no option '--verson'; did you mean '--version'?",
     "zzz": "there is no command 'zzz' (see",

@@ -205,3 +205,11 @@ def test_faults_of_a_named_file_keep_their_place(tmp_path):
     path.write_text("x,y,z\n1,2,three\n1,2,3\n")
     (line,) = faults(("shape: gaussian", "shape: {particles: macro.csv}"), (f"  {SIZES}\n", ""), folder=tmp_path)
     assert line.startswith(f"{path}:2:")
+
+
+def test_no_beam_is_a_sheet():
+    line = fault(("x: 6.1 mm rms", "x: 6.1 nm rms"))
+    assert line == (
+        f"{FILE}:7:9: bunch.size: one of x and y is 8.03e+05 times the other; at most 10000, far flatter than any beam"
+    )
+    assert case(("y: 4.9 mm rms", "y: 0.7 um rms"))

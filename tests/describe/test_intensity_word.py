@@ -113,3 +113,8 @@ def test_peak_current_comes_back(shape):
     found = bunch("2 A peak", ("shape: gaussian", f"shape: {shape}"))
     current = E * found.particles * found.shape.peak_line_density / found.sigma[2] * found.velocity
     assert current == pytest.approx(2.0, rel=ROUNDING)
+
+
+@pytest.mark.parametrize("intensity", ["1e-300 mA mean", "0.5 particles"])
+def test_a_ring_holds_one_particle_at_least(intensity):
+    assert "particles a metre, less than one in the ring" in fault(("3.5e12 particles", intensity), *COASTING)
