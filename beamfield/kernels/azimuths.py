@@ -21,7 +21,8 @@ def elliptic(phi, m):
     a, b, scale = 1.0, math.sqrt(1.0 - m), 1.0
     while abs(a - b) > 1e-15 * a:
         turns = math.pi * math.floor(phi / math.pi + 0.5)
-        phi += math.atan(b / a * math.tan(phi - turns)) + turns
+        part = min(max(phi - turns, -0.5 * math.pi), 0.5 * math.pi)  # never past the pole of the tangent by rounding
+        phi += math.atan(b / a * math.tan(part)) + turns
         a, b, scale = 0.5 * (a + b), math.sqrt(a * b), 2.0 * scale
     return phi / (scale * a)
 
