@@ -66,7 +66,7 @@ def height_nodes(rule):
     """Nodes for the longer part of the heights, the pairs or what is left above or below them, and for the shorter."""
     if not rule.faced:
         return *unit_nodes(rule.height // 2), np.empty(0), np.empty(0)
-    few = max(6, rule.height // 5)
+    few = min(max(6, rule.height // 5), rule.height - 2)
     return *unit_nodes((rule.height - few) // 2), *unit_nodes(few)
 
 
