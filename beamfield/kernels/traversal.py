@@ -1,0 +1,254 @@
+"""The walk: every target cell finds its own far and near cells, from the root down.
+
+A target cell A starts with the source cells B that its parent left open. Each of them is
+
+    far    its moments go to the local coefficients of A, if the expansion is good enough (`accepted`);
+    apart  A is a leaf, large beside B: the moments of B go to the field at each place of A;
+    loose  B is a leaf, large beside A: each charge of B goes to the local coefficients of A;
+    opened if it is the larger of the two or A is a leaf: its children are looked at instead;
+    near   both are leaves: pair by pair; so is a far cell with so few pairs that this is cheaper;
+    open   otherwise: left to the children of A.
+
+Targets own what they sum, in an order that the trees alone decide. A task is a cell low in the tree; it walks its own path
+from the root, repeating a little work instead of sharing it. So the bits do not depend on the number of threads.
+"""
+
+from typing import NamedTuple
+
+import numpy as np
+from numba import parallel_chunksize, prange
+
+from beamfield.kernels.compiled import compiled
+from beamfield.kernels.extent import RADIUS, SPREAD, STRENGTH
+from beamfield.kernels.lanes import LANES
+from beamfield.kernels.local_field import (
+    bench,
+    field_at_places,
+    field_of_cell,
+    finish_batch,
+    finish_cell,
+    inherit,
+    take_cell,
+    take_place,
+)
+from beamfield.kernels.near_field import BLOCK, add_near
+from beamfield.kernels.tree import longer
+
+TOUCH = 1.2  # radii of two far cells together, at most, over their distance
+LARGE = 4.0  # ratio of mean squares of two cells of which one is large beside the other
+BUFFER = 1024  # cells that are collected before they are summed
+
+
+class Side(NamedTuple):
+    """What is known of the targets or of the sources: tree, places (4, n), sheets; moments (of sources only)."""
+
+    tree: tuple
+    places: np.ndarray
+    sheets: np.ndarray
+    moments: np.ndarray
+
+
+class Rules(NamedTuple):
+    """limit    tolerance squared times typical field, see `accepted`
+    cloud2   softening length squared
+    pairs    pairs that take as long as one source in a batch
+    ranked   pairs that take as long as one far cell at one place
+    binomial (p + 1,) last row of Pascal's triangle
+    single   whether near pairs may be done in single precision
+    """
+
+    limit: float
+    cloud2: float
+    pairs: float
+    ranked: float
+    binomial: np.ndarray
+    single: bool
+
+
+def walk(target, source, tables, rules, tasks, field):
+    """Add the field at all places of the targets to field (3, n); tasks are cells, none above another, that hold them all."""
+    with parallel_chunksize(1):
+        walk_tasks(*target[:3], *source, tables, rules, tasks, field)
+
+
+@compiled(parallel=True)
+def walk_tasks(tree, places, sheets, source_tree, source_places, source_sheets, moments, tables, rules, tasks, field):
+    """As walk; parallel loops take no tuples in tuples."""
+    for t in prange(tasks.shape[0]):
+        target = Side(tree, places, sheets, moments)
+        source = Side(source_tree, source_places, source_sheets, moments)
+        walk_task(target, source, tables, rules, tasks[t], field)
+
+
+@compiled()
+def walk_task(target, source, tables, rules, task, field):
+    """Walk from the root down to cell `task` and on to all leaves below it."""
+    depth = target.tree.level.shape[0] + 1
+    work = bench(tables, depth)
+    begin = np.zeros(depth + 1, np.int64)  # where the open cells of each level begin
+    begin[1] = 1
+    opened = np.zeros(256, np.int64)
+    stack, near, apart = np.zeros(source.tree.level.shape[0] + 2, np.int64), np.zeros(BUFFER, np.int64), np.zeros(BUFFER, np.int64)
+    path = path_to(target.tree.parent, task)
+    todo, level = np.zeros(2 * depth, np.int64), np.zeros(2 * depth, np.int64)
+    count = 1
+    level[0] = 1
+    while count:
+        count -= 1
+        a, d = todo[count], level[count]
+        if d > 1:
+            inherit(work, tables, d, target.sheets[target.tree.parent[a]], target.sheets[a])
+        opened = sort_out(target, source, tables, rules, a, d, work, begin, opened, stack, near, apart, field)
+        child = target.tree.child[a]
+        if child >= 0 and d < path.shape[0]:
+            todo[count], level[count] = path[d], d + 1
+            count += 1
+        elif child >= 0:
+            todo[count], todo[count + 1] = child + 1, child
+            level[count], level[count + 1] = d + 1, d + 1
+            count += 2
+
+
+@compiled()
+def path_to(parent, task):
+    """The cells from the root to a cell."""
+    length, v = 0, task
+    while v >= 0:
+        v = parent[v]
+        length += 1
+    path = np.zeros(length, np.int64)
+    v = task
+    for i in range(length - 1, -1, -1):
+        path[i] = v
+        v = parent[v]
+    return path
+
+
+@compiled()
+def sort_out(target, source, tables, rules, a, d, work, begin, opened, stack, near, apart, field):
+    """Deal with all that the parent of cell a, at level d, left open; the list of open cells, perhaps a longer copy."""
+    sheet, low, high, leaf = target.sheets[a], target.tree.first[a], target.tree.last[a], target.tree.child[a] < 0
+    first, last = source.tree.first, source.tree.last
+    places, blocked = high - low, BLOCK * ((high - low + BLOCK - 1) // BLOCK)
+    lanes, nears, aparts, end = 0, 0, 0, begin[d]
+    for i in range(begin[d - 1], begin[d]):
+        stack[0] = opened[i]
+        waiting = 1
+        while waiting:
+            waiting -= 1
+            b = stack[waiting]
+            other = source.sheets[b]
+            small = leaf and blocked * (last[b] - first[b]) <= rules.pairs
+            if not small and accepted(sheet, other, distance2(sheet, other), other[STRENGTH], rules):
+                take_cell(work, lanes, sheet, other, source.moments[b])
+                lanes += 1
+            elif not small and leaf and is_apart(target.places, low, high, sheet, other, last[b] - first[b], rules):
+                apart[aparts] = b
+                aparts += 1
+            elif source.tree.child[b] >= 0 and (leaf or other[SPREAD + 2] > sheet[SPREAD + 2]) and not small:
+                stack[waiting], stack[waiting + 1] = source.tree.child[b] + 1, source.tree.child[b]
+                waiting += 2
+            elif leaf:
+                near[nears] = b
+                nears += 1
+            elif source.tree.child[b] < 0 and is_loose(source.places, first[b], last[b], sheet, other, places, rules):
+                for j in range(first[b], last[b]):
+                    take_place(work, lanes, sheet, source.places, j)
+                    lanes += 1
+                    if lanes == LANES:
+                        finish_batch(work, tables, lanes, rules.cloud2)
+                        lanes = 0
+            else:
+                opened = longer(opened, end + 1)
+                opened[end] = b
+                end += 1
+            if lanes == LANES or (lanes and aparts == BUFFER):
+                finish_batch(work, tables, lanes, rules.cloud2)
+                lanes = 0
+            if nears == BUFFER:
+                add_near(target.places, low, high, sheet, source, near, nears, rules.cloud2, rules.single, field)
+                nears = 0
+            if aparts == BUFFER:
+                add_apart(target, source, tables, rules, low, high, apart, aparts, work, field)
+                aparts = 0
+    begin[d + 1] = end
+    if lanes:
+        finish_batch(work, tables, lanes, rules.cloud2)
+    finish_cell(work, tables, d)
+    if leaf:
+        field_at_places(work, tables, d, sheet, target.places, low, high, field)
+        add_apart(target, source, tables, rules, low, high, apart, aparts, work, field)
+        if nears:
+            add_near(target.places, low, high, sheet, source, near, nears, rules.cloud2, rules.single, field)
+    return opened
+
+
+@compiled()
+def distance2(sheet, other):
+    x, y, z = sheet[0] - other[0], sheet[1] - other[1], sheet[2] - other[2]
+    return x * x + y * y + z * z
+
+
+@compiled()
+def accepted(sheet, other, r2, charge, rules):
+    """Whether the expansion of cell B (sheet other) about cell A (sheet) is good enough at distance R.
+
+    The first order dropped is of relative size e = sum_k (p over k) W_k(B) W_{p-k}(A) / R^p (Dehnen 2014, eq. 13 f., from memory), and
+    the field itself is f = charge / (R^2 F) of the typical one, F. Demanded is e sqrt(f) < tolerance: strong sources are
+    taken more exactly than weak ones, as errors of many cells add at random. The radii must not reach over the distance, so
+    that the series converges; with a cloud, R^2 + a^2 stands for R^2, where its singularity is.
+    """
+    r2 += rules.cloud2
+    reach = sheet[RADIUS] + other[RADIUS]
+    if not reach * reach < TOUCH * TOUCH * r2:
+        return False
+    order = rules.binomial.shape[0] - 1
+    e = 0.0
+    bound = r2
+    for k in range(order + 1):
+        e += rules.binomial[k] * other[SPREAD + k] * sheet[SPREAD + order - k]
+    for k in range(order):
+        bound *= r2
+    return e * e * charge < rules.limit * bound
+
+
+@compiled()
+def is_apart(places, low, high, sheet, other, sources, rules):
+    """Whether a far expansion of cell B is good, and worth while, at each place of the leaf A."""
+    if sources <= rules.ranked or not sheet[SPREAD + 2] > LARGE * other[SPREAD + 2]:
+        return False
+    return far_enough(places, low, high, other, other[STRENGTH], rules)
+
+
+@compiled()
+def is_loose(places, low, high, sheet, other, targets, rules):
+    """Whether each charge of the leaf B alone is far from the cell A, and worth while."""
+    if targets <= rules.pairs or not other[SPREAD + 2] > LARGE * sheet[SPREAD + 2]:
+        return False
+    return far_enough(places, low, high, sheet, other[STRENGTH], rules)
+
+
+@compiled()
+def far_enough(places, low, high, sheet, charge, rules):
+    """Whether the nearest of some places is far enough from a cell."""
+    nearest = np.inf
+    for i in range(low, high):
+        x, y, z = places[0, i] - sheet[0], places[1, i] - sheet[1], places[2, i] - sheet[2]
+        nearest = min(nearest, x * x + y * y + z * z)
+    r2 = nearest + rules.cloud2
+    if not sheet[RADIUS] * sheet[RADIUS] < TOUCH * TOUCH * r2:
+        return False
+    order = rules.binomial.shape[0] - 1
+    bound = r2
+    for k in range(order):
+        bound *= r2
+    return sheet[SPREAD + order] * sheet[SPREAD + order] * charge < rules.limit * bound
+
+
+@compiled()
+def add_apart(target, source, tables, rules, low, high, cells, count, work, field):
+    for i in range(count):
+        b = cells[i]
+        field_of_cell(
+            work, tables, source.sheets[b], source.moments[b], target.places, low, high, rules.cloud2, field
+        )

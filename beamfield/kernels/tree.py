@@ -1,0 +1,224 @@
+"""A binary tree over points, that any arrangement of them may grow: spheres, needles, halos, clusters, coincident points.
+
+A cell is cut across the longest side of its box, at the median rounded to whole leaves, so that nearly all leaves are full;
+but no nearer to an end than a tenth of the side. The second rule keeps sparse surroundings apart from a dense core and makes
+the cells small where the points are close: the heavier part then shrinks by ten, so depth grows with the logarithm of
+number and of range. Points that coincide cannot be cut; such a pile becomes one place with the sum of their charges.
+
+Sources: P. B. Callahan, S. R. Kosaraju, J. ACM 42 (1995) 67, for cuts that keep a fair share of the side, from memory.
+"""
+
+from typing import NamedTuple
+
+import numpy as np
+from numba import prange
+
+from beamfield.kernels.compiled import compiled
+
+SHARE = 0.1  # of the side of a box that either part keeps at least
+LEAF, PILE = -1, -2  # what a cell may be instead of cut
+SAMPLE = 63  # values that a pivot is chosen from
+
+
+class Tree(NamedTuple):
+    """Cells, level by level from the root, which is cell 0; all arrays of indices.
+
+    first, last  places of a cell: first .. last - 1
+    rows, end    points of a cell, as sorted: rows .. end - 1; more than the places where points coincide
+    child        first of two children, which are neighbours; -1 for a leaf
+    parent       -1 for the root
+    level        first cell of each level, and behind the last
+    """
+
+    first: np.ndarray
+    last: np.ndarray
+    rows: np.ndarray
+    end: np.ndarray
+    child: np.ndarray
+    parent: np.ndarray
+    level: np.ndarray
+
+
+def plant(positions, charges, leaf, unit=1.0):
+    """Tree of leaves of at most `leaf` places, places (4, n) as x, y, z and charge, and the original number of each point.
+
+    positions (3, N) are taken in multiples of unit, a power of two, so that nothing is rounded; charges (N,).
+    """
+    points = np.empty((positions.shape[1], 4))
+    np.multiply(positions.T, 1.0 / unit, out=points[:, :3])
+    points[:, 3] = np.arange(positions.shape[1])
+    rows, end, child, parent, level = grow(points, leaf)
+    first, last = settle(rows, end, child)
+    places = np.empty((4, last[0]))
+    tree = Tree(first, last, rows, end, np.maximum(child, -1), parent, level)
+    gather(points, charges, tree, places)
+    return tree, places, points[:, 3].astype(np.int64)
+
+
+@compiled(parallel=True)
+def grow(points, leaf):
+    """Sort the points into cells; rows, end, child, parent of each cell, and the levels."""
+    rows, end = np.zeros(64, np.int64), np.zeros(64, np.int64)
+    child, parent = np.zeros(64, np.int64), np.zeros(64, np.int64)
+    end[0], parent[0] = points.shape[0], -1
+    level = [0]
+    low, high = 0, 1
+    while high > low:
+        level.append(high)
+        need = high + 2 * (high - low)
+        rows, end, child, parent = longer(rows, need), longer(end, need), longer(child, need), longer(parent, need)
+        for v in prange(low, high):
+            child[v] = divide(points, rows[v], end[v], leaf)
+        count = high
+        for v in range(low, high):
+            middle = child[v]
+            if middle >= 0:
+                child[v] = count
+                parent[count], parent[count + 1] = v, v
+                rows[count], end[count], rows[count + 1], end[count + 1] = rows[v], middle, middle, end[v]
+                count += 2
+        low, high = high, count
+    return rows[:low].copy(), end[:low].copy(), child[:low].copy(), parent[:low].copy(), np.array(level)
+
+
+@compiled()
+def longer(array, need):
+    """The array, or a copy of at least twice its length where it is shorter than needed."""
+    if need <= array.shape[0]:
+        return array
+    copy = np.zeros(max(need, 2 * array.shape[0]), np.int64)
+    copy[: array.shape[0]] = array
+    return copy
+
+
+@compiled()
+def divide(points, low, high, leaf):
+    """Sort rows low .. high - 1 into two parts; where the second begins, or else LEAF or PILE."""
+    axis, bottom, top = longest_side(points, low, high)
+    if bottom == top:
+        return PILE
+    if high - low <= leaf:
+        return LEAF
+    middle = low + leaf * (((high - low + leaf - 1) // leaf + 1) // 2)
+    select(points, low, high, middle, axis)
+    share = SHARE * (top - bottom)
+    if points[middle, axis] < bottom + share:
+        return cut(points, low, high, axis, bottom + share if bottom + share > bottom else top)
+    if points[middle, axis] > top - share:
+        return cut(points, low, high, axis, top - share if top - share > bottom else top)
+    return middle
+
+
+@compiled()
+def longest_side(points, low, high):
+    """Axis, lower and upper end of the longest side of the box about rows low .. high - 1."""
+    x, y, z = points[low, 0], points[low, 1], points[low, 2]
+    left, right, down, up, back, front = x, x, y, y, z, z
+    for i in range(low, high):
+        x, y, z = points[i, 0], points[i, 1], points[i, 2]
+        left, right = min(left, x), max(right, x)
+        down, up = min(down, y), max(up, y)
+        back, front = min(back, z), max(front, z)
+    if right - left >= max(up - down, front - back):
+        return 0, left, right
+    return (1, down, up) if up - down >= front - back else (2, back, front)
+
+
+@compiled()
+def swap(points, i, j):
+    for d in range(4):
+        points[i, d], points[j, d] = points[j, d], points[i, d]
+
+
+@compiled()
+def cut(points, low, high, axis, value):
+    """Rows below the value first; where the others begin."""
+    i, j = low, high - 1
+    while True:
+        while i <= j and points[i, axis] < value:
+            i += 1
+        while i <= j and not points[j, axis] < value:
+            j -= 1
+        if i >= j:
+            return i
+        swap(points, i, j)
+
+
+@compiled()
+def select(points, low, high, k, axis):
+    """Rows low .. k - 1 no greater than row k, rows behind it no smaller: C. A. R. Hoare's FIND, pivot from a sample."""
+    i, j = low, high - 1
+    while j > i:
+        pivot = choose(points, i, j, k, axis)
+        a, b = i, j
+        while a <= b:
+            while points[a, axis] < pivot:
+                a += 1
+            while points[b, axis] > pivot:
+                b -= 1
+            if a <= b:
+                swap(points, a, b)
+                a += 1
+                b -= 1
+        if k <= b:
+            j = b
+        elif k >= a:
+            i = a
+        else:
+            return
+
+
+@compiled()
+def choose(points, i, j, k, axis):
+    """A value of rows i .. j that should stand near row k."""
+    if j - i < 10 * SAMPLE:
+        a, b, c = points[i, axis], points[(i + j) // 2, axis], points[j, axis]
+        return max(min(a, b), min(max(a, b), c))
+    sample = np.empty(SAMPLE)
+    step = (j - i) // SAMPLE
+    for s in range(SAMPLE):
+        sample[s] = points[i + s * step, axis]
+    sample.sort()
+    return sample[min((k - i) * SAMPLE // (j - i + 1), SAMPLE - 1)]
+
+
+@compiled()
+def settle(rows, end, child):
+    """Places first .. last - 1 of each cell: as many as points, but one for a pile."""
+    first, last = np.zeros(rows.shape[0], np.int64), np.zeros(rows.shape[0], np.int64)
+    for v in range(rows.shape[0] - 1, -1, -1):
+        if child[v] >= 0:
+            last[v] = last[child[v]] + last[child[v] + 1]
+        else:
+            last[v] = 1 if child[v] == PILE else end[v] - rows[v]
+    for v in range(rows.shape[0]):
+        if child[v] >= 0:
+            first[child[v]] = first[v]
+            first[child[v] + 1] = first[v] + last[child[v]]
+        last[v] += first[v]
+    return first, last
+
+
+@compiled(parallel=True)
+def gather(points, charges, tree, places):
+    """Fill places (4, n): x, y, z and charge, in the order of the leaves."""
+    for v in prange(tree.child.shape[0]):
+        if tree.child[v] < 0:
+            shift = tree.rows[v] - tree.first[v]
+            for k in range(tree.first[v], tree.last[v]):
+                for d in range(3):
+                    places[d, k] = points[k + shift, d]
+                places[3, k] = charges[int(points[k + shift, 3])]
+            for i in range(tree.last[v] + shift, tree.end[v]):
+                places[3, tree.first[v]] += charges[int(points[i, 3])]
+
+
+@compiled(parallel=True)
+def scatter(field, order, tree, factor, out):
+    """Fill out (3, N) in the original order with factor times field (3, n) at the places."""
+    for v in prange(tree.child.shape[0]):
+        if tree.child[v] < 0:
+            for i in range(tree.rows[v], tree.end[v]):
+                k = min(tree.first[v] + i - tree.rows[v], tree.last[v] - 1)
+                for d in range(3):
+                    out[d, order[i]] = field[d, k] * factor
