@@ -7,15 +7,15 @@ from beamfield import __version__
 from beamfield.constants import DATA_SET
 from beamfield.errors import BeamfieldError, InputError
 
-__all__ = ["BeamfieldError", "InputError", "check_page", "explain", "load", "load_all", "on_compile"]
-__all__ += ["report_page", "schema", "schema_page", "starter", "superpose", "version_line"]
+__all__ = ["BeamfieldError", "InputError", "check_page", "evaluate", "explain", "load", "load_all", "on_compile"]
+__all__ += ["report_page", "schema", "schema_page", "self_field", "starter", "superpose", "version_line"]
 
 
 def load(path):
     """Case in the file at `path`, checked; InputError with every fault found."""
-    from beamfield.describe.case import read_case
+    from beamfield.describe import case
 
-    return read_case(path)
+    return case.load(path)
 
 
 def load_all(paths):
@@ -29,6 +29,27 @@ def load_all(paths):
     if faults:
         raise InputError(*faults)
     return cases
+
+
+def evaluate(case, method=None):
+    """Outcome of a case: every result that applies, and the verdicts on its limits; method over the case's own."""
+    from dataclasses import replace
+
+    from beamfield.estimate.answer import answer, checks
+    from beamfield.judge.limit import judge
+    from beamfield.judge.outcome import Outcome
+
+    numerics = replace(case.numerics, method=method) if method else case.numerics
+    findings = answer(case.bunch, case.surroundings, case.ring, numerics)
+    verdicts = tuple(judge(limit, findings[limit.result].value) for limit in case.limits)
+    return Outcome(case.title, case.file, findings, verdicts, case.warnings, checks(case.bunch, findings), case.bunch)
+
+
+def self_field(case, points):
+    """The bunch's own Field at points (3, M) [m] about its centre: E [V/m], B [T], doubt, closed_form (E or None)."""
+    from beamfield.estimate import source, superposition
+
+    return source.self_field(case.bunch, case.numerics, superposition.rows("points", points))
 
 
 def superpose(points, positions, charges, momenta, cloud=0.0, method="auto", tolerance=1e-4):
@@ -87,6 +108,6 @@ def version_line():
 
 def on_compile(tell):
     """Call tell() once, when machine code has to be made because none is kept."""
-    from beamfield.kernels import compiled
+    from beamfield.kernels import notice
 
-    compiled.on_compile(tell)
+    notice.tell = tell

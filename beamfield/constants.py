@@ -1,6 +1,7 @@
 """CODATA 2022 values in SI, kept here because a library's data set moves under one's feet.
 
-Source: E. Tiesinga, P. J. Mohr, D. B. Newell, B. N. Taylor, CODATA 2022 recommended values; tested against scipy.constants.
+Source: E. Tiesinga, P. J. Mohr, D. B. Newell, B. N. Taylor, CODATA 2022 recommended values; tested against
+scipy.constants.
 """
 
 from math import pi

@@ -42,6 +42,14 @@ def imports(tree):
             yield from (f"{node.module}.{alias.name}" for alias in node.names)
 
 
+def outside_functions(tree):
+    """Nodes that are run when a file is imported."""
+    for node in ast.iter_child_nodes(tree):
+        if not isinstance(node, ast.FunctionDef | ast.Lambda):
+            yield node
+            yield from outside_functions(node)
+
+
 def trees():
     return [
         pytest.param(path, ast.parse(path.read_text(encoding="utf-8")), id=str(path.relative_to(HOUSE)))
@@ -69,7 +77,7 @@ def test_passports(path, tree):
 
 @pytest.mark.parametrize(("path", "tree"), trees())
 def test_slow_libraries_wait_for_the_call(path, tree):
-    at_once = {name.split(".")[0] for name in imports(ast.Module([n for n in tree.body if not hasattr(n, "body")], []))}
+    at_once = {name.split(".")[0] for name in imports(ast.Module(list(outside_functions(tree)), []))}
     assert not at_once & (LATE - ({"numba"} if room(path) == "kernels" else set()))
 
 
@@ -77,6 +85,12 @@ def test_slow_libraries_wait_for_the_call(path, tree):
 def test_only_the_command_line_prints(path, tree):
     calls = {getattr(node.func, "id", "") for node in ast.walk(tree) if isinstance(node, ast.Call)}
     assert not calls & ({"eval", "exec", "compile", "input"} | ({"print"} if room(path) != "cli" else set()))
+
+
+@pytest.mark.parametrize(("path", "tree"), trees())
+def test_chance_is_drawn_in_sampling_alone(path, tree):
+    used = {ast.unparse(node) for node in ast.walk(tree) if isinstance(node, ast.Attribute)} | set(imports(tree))
+    assert "sampl" in path.stem or not {"np.random", "numpy.random", "random", "scipy.stats.qmc"} & used
 
 
 def test_no_two_files_share_a_name_and_none_has_a_vague_one():

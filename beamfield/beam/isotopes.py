@@ -4,12 +4,11 @@ The two tables beside this file name their sources; they are read when the first
 """
 
 import re
-from difflib import get_close_matches
 from functools import cache
 from pathlib import Path
 
 from beamfield.constants import ATOMIC_MASS, ELECTRON_MASS, ELEMENTARY_CHARGE, SPEED_OF_LIGHT
-from beamfield.errors import NonsenseError
+from beamfield.errors import NonsenseError, did_you_mean
 
 _NAME = re.compile(r"([A-Za-z]{1,2})-?([0-9]{1,3})|([0-9]{1,3})-?([A-Za-z]{1,2})")
 
@@ -57,9 +56,8 @@ def _no_charge_state(element, charge_state, bare):
 
 
 def _no_element(element):
-    close = get_close_matches(element, _masses(), n=3, cutoff=0.5)
-    hint = f"did you mean {' or '.join(close)}?" if close else "give the symbol, such as 'Ar' for argon"
-    return f"no element '{element}' from hydrogen to lawrencium; {hint}"
+    hint = did_you_mean(element, _masses()) or "; give the symbol, such as 'Ar' for argon"
+    return f"no element from hydrogen to lawrencium is called '{element}'{hint}"
 
 
 def _no_isotope(element, mass_number, known):

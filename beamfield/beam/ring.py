@@ -10,7 +10,9 @@ from beamfield.errors import NonsenseError
 
 @dataclass(frozen=True, slots=True, eq=False)
 class Optics:
-    """Places s (K,) round the ring and beta_x, beta_y, dispersion_x (K,) there [m]; weights (K,) of the ring average, sum 1."""
+    """Places s (K,) round the ring and beta_x, beta_y, dispersion_x (K,) there [m]; weights (K,) of the ring average,
+    sum 1.
+    """
 
     s: np.ndarray
     beta_x: np.ndarray

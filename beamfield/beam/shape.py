@@ -29,9 +29,9 @@ _ELLIPSOID_WIDTHS = {
 class Shape:
     """A density of constant form.
 
-    Either a product of a transverse profile (over the ellipse x2/a2 + y2/b2) and a line density, or an `ellipsoid` whose
-    density depends on x2/a2 + y2/b2 + z2/c2 alone; then both profiles carry the same word, "uniform" or "parabolic".
-    A Gaussian is both and counts as a product.
+    Either a product of a transverse profile (over the ellipse x2/a2 + y2/b2) and a line density, or an `ellipsoid`
+    whose density depends on x2/a2 + y2/b2 + z2/c2 alone; then both profiles carry the same word, "uniform" or
+    "parabolic". A Gaussian is both and counts as a product.
     """
 
     transverse: str
@@ -49,7 +49,8 @@ class Shape:
 
     @property
     def name(self):
-        return next((name for name, shape in SHAPES.items() if shape == self), f"{self.transverse} x {self.longitudinal}")
+        known = (name for name, shape in SHAPES.items() if shape == self)
+        return next(known, f"{self.transverse} x {self.longitudinal}")
 
     @property
     def coasting(self):

@@ -17,12 +17,15 @@ class Chamber:
 
     def __post_init__(self):
         if self.shape not in CHAMBERS or not (self.half_width > 0.0 and self.half_height > 0.0):
-            raise NonsenseError(f"no chamber is {self.shape} with half sizes {self.half_width:g} and {self.half_height:g} m")
+            sizes = f"{self.half_width:g} and {self.half_height:g} m"
+            raise NonsenseError(f"no chamber is {self.shape} with half sizes {sizes}")
 
 
 @dataclass(frozen=True, slots=True)
 class Surroundings:
-    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m]; neutralisation, fraction of its charge."""
+    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m]; neutralisation, fraction of its
+    charge.
+    """
 
     chamber: Chamber | None = None
     pole_half_gap: float | None = None

@@ -3,11 +3,11 @@
 The one list that evaluation, limits, pages, `explain` and the README are made from; its order is theirs.
 """
 
+from beamfield.estimate.catalogue_entry import QUESTIONS, Entry
 from beamfield.estimate.entries_bunch import BUNCH
 from beamfield.estimate.entries_domain import DOMAIN
 from beamfield.estimate.entries_effect import EFFECT
 from beamfield.estimate.entries_strength import STRENGTH
-from beamfield.estimate.catalogue_entry import QUESTIONS, Entry
 
 __all__ = ["CATALOGUE", "QUESTIONS", "Entry"]
 

@@ -2,7 +2,10 @@
 
 from beamfield.estimate.catalogue_entry import Entry
 
-_MECHANICS = "special relativity: L. D. Landau and E. M. Lifshitz, The Classical Theory of Fields, 1975, sec. 9 (from memory of it)"
+_MECHANICS = (
+    "special relativity: L. D. Landau and E. M. Lifshitz, The Classical Theory of Fields, 1975, sec. 9 (from memory "
+    "of it)"
+)
 _CURRENT = "definition of current and line density; common practice, no source"
 
 BUNCH = (
@@ -86,7 +89,8 @@ BUNCH = (
         "Mean over peak line density round the ring: at most 1, which is a coasting beam (some texts invert it).",
         "B_f = n_b N / (C lambda_peak)",
         "equal bunches that do not overlap",
-        "from memory of L. J. Laslett, On intensity limitations imposed by transverse space-charge effects, BNL-7534, 1963",
+        "from memory of L. J. Laslett, On intensity limitations imposed by transverse space-charge effects, "
+        "BNL-7534, 1963",
         ("ring",),
     ),
 )

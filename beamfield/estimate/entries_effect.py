@@ -7,7 +7,8 @@ _NEWTON = (
     "from memory of M. Reiser, Theory and Design of Charged Particle Beams, 1994, ch. 4"
 )
 _GRADIENT_TUNE = (
-    "from memory of E. D. Courant and H. S. Snyder, Theory of the alternating-gradient synchrotron, Ann. Phys. 3, 1, 1958, "
+    "from memory of E. D. Courant and H. S. Snyder, Theory of the alternating-gradient synchrotron, Ann. Phys. 3, 1, "
+    "1958, "
     "sec. 4; round Gaussian formula from memory of K. Schindl, Space charge, CERN/PS 99-012 (DI), 1999"
 )
 
@@ -18,7 +19,8 @@ EFFECT = (
             "defocusing_{i}",
             "1/m2",
             "effect",
-            "Strength of the self-field as a lens for small {i}: the kappa in {i}'' = kappa {i}; positive, it defocuses.",
+            "Strength of the self-field as a lens for small {i}: the kappa in {i}'' = kappa {i}; positive, it "
+            "defocuses.",
             "kappa_{i} = q (dE_{i}/d{i}) / (gamma^3 m beta^2 c^2)",
             "small amplitudes; free space; slopes small against 1",
             _NEWTON,
@@ -63,9 +65,11 @@ EFFECT = (
             "space_charge_ratio_{i}",
             "1",
             "effect",
-            "Space charge over emittance in the rms envelope equation of {i}: far below 1 the emittance rules, far above it "
+            "Space charge over emittance in the rms envelope equation of {i}: far below 1 the emittance rules, far "
+            "above it "
             "space charge.",
-            "sigma_{i}^2 <{i} {i}''_sc> / emittance_{i}^2; long beam: K sigma_{i}^3 / (2 (sigma_x + sigma_y) emittance_{i}^2), K averaged",
+            "sigma_{i}^2 <{i} {i}''_sc> / emittance_{i}^2; long beam: K sigma_{i}^3 / (2 (sigma_x + sigma_y) "
+            "emittance_{i}^2), K averaged",
             "density of elliptic symmetry; rms emittance, geometric",
             "F. J. Sacherer, RMS envelope equations with space charge, IEEE Trans. Nucl. Sci. NS-18, 1105, 1971",
             ("emittance",),
@@ -77,9 +81,11 @@ EFFECT = (
             "tune_shift_{i}",
             "1",
             "effect",
-            "Direct incoherent shift of the {i} tune of a particle of small amplitude at the peak line density; negative "
+            "Direct incoherent shift of the {i} tune of a particle of small amplitude at the peak line density; "
+            "negative "
             "when defocusing.",
-            "-1/(4 pi) integral of beta_{i} kappa_{i} ds round the ring; long round Gaussian of normalised rms emittance e_n: "
+            "-1/(4 pi) integral of beta_{i} kappa_{i} ds round the ring; long round Gaussian of normalised rms "
+            "emittance e_n: "
             "-r_0 N / (4 pi e_n beta gamma^2 B_f)",
             "shift small against the tune; free space, without images",
             _GRADIENT_TUNE,

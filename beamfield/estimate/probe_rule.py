@@ -9,20 +9,23 @@ import numpy as np
 
 @dataclass(frozen=True, slots=True)
 class Rule:
-    """Charges in azimuth, distance and height round a probe; `faced` when the density ends on a face along z."""
+    """Charges in azimuth, distance and height round a probe; `faced` when the density ends on a face along z;
+    `window`, rms lengths of a Gaussian that are kept: beyond 6.5 lies less than 1e-9 of it."""
 
     azimuth: int
     radial: int
     height: int
     faced: bool
+    window: float = 6.5
 
     @property
     def charges(self):
         return self.azimuth * self.radial * self.height
 
     def thinned(self, part):
-        """The same rule with `part` of the nodes in each direction."""
-        return Rule(even(part * self.azimuth), max(4, round(part * self.radial)), even(part * self.height), self.faced)
+        """The same rule with `part` of the nodes in each direction and half an rms length less of a Gaussian."""
+        radial = self.radial if self.radial == 2 else max(4, round(part * self.radial))
+        return Rule(even(part * self.azimuth), radial, even(part * self.height), self.faced, self.window - 0.5)
 
 
 def even(number):
@@ -44,6 +47,12 @@ def rule_for(aspect, section, charges, faced):
     return Rule(azimuth, radial, height, faced)
 
 
+def ray_rule(charges):
+    """Rule for the rays of an ellipsoid: two charges on each, four times as many slopes as directions."""
+    azimuth = even(sqrt(charges / 8.0))
+    return Rule(azimuth, 2, max(8, int(charges / 2.0 / azimuth)), True)
+
+
 @lru_cache(64)
 def unit_nodes(count):
     """Gauss-Legendre nodes and weights on (0, 1)."""
@@ -59,56 +68,29 @@ def height_nodes(rule):
     return *unit_nodes(paired), *unit_nodes(max(2, rule.height - 2 * paired))
 
 
-def azimuth_nodes(probes, scales, count, edged, ellipsoid=False):
+def azimuth_nodes(probes, scales, count, edged):
     """Directions (M, 2, K), in units of the scales a and b, and weights (M, K) of the azimuth for probes (3, M).
 
     The angle is the amplitude of Jacobi's functions for the elliptic section, even in their argument: that is how
-    1/(a^2 cos^2 + b^2 sin^2) wants to be sampled. From outside an edged bunch see `sectors`.
+    1/(a^2 cos^2 + b^2 sin^2) wants to be sampled. From beside an edged bunch only the directions that meet it count,
+    crowded at the ends of their range, where the chord vanishes as a root.
     """
     from scipy.special import ellipj, ellipk, ellipkinc
 
     a, b = scales[:2]
     parameter = 1.0 - (min(a, b) / max(a, b)) ** 2
     x, y = (probes[0] / a, probes[1] / b) if a >= b else (probes[1] / b, probes[0] / a)
-    z = probes[2] / scales[2] if ellipsoid else np.zeros(1)
-    needle = ellipsoid and scales[2] > 3.0 * sqrt(a * b)
     length = 4.0 * ellipk(parameter)
     argument = np.broadcast_to(length * (np.arange(count) + 0.5) / count, (len(x), count)).copy()
     weights = np.full((len(x), count), length / count)
     distance = np.hypot(x, y)
-    seen_from = distance**2 + z**2 if needle else distance**2
-    outside = np.flatnonzero(edged & (seen_from > 1.0))
-    if len(outside):
-        centre = np.arctan2(-y[outside], -x[outside])
-        edges, shares = sectors(distance[outside], np.broadcast_to(z, len(x))[outside], count, needle)
-        edges = ellipkinc(centre[:, None] + edges, parameter)
-        nodes, slopes = zip(*(rooted_nodes(share) for share in shares), strict=True)
-        spans = np.diff(edges, axis=1)
-        argument[outside] = np.concatenate([edges[:, [i]] + spans[:, [i]] * nodes[i] for i in range(len(shares))], axis=1)
-        weights[outside] = np.concatenate([spans[:, [i]] * slopes[i] for i in range(len(shares))], axis=1)
+    beside = np.flatnonzero(edged & (distance > 1.0))
+    if len(beside):
+        centre, reach = np.arctan2(-y[beside], -x[beside]), np.arcsin(1.0 / distance[beside])
+        low, high = (ellipkinc(centre + side * reach, parameter)[:, None] for side in (-1.0, 1.0))
+        turn = pi * ((np.arange(count) + 0.5) / count - 0.5)
+        argument[beside] = 0.5 * (high + low) + 0.5 * (high - low) * np.sin(turn)
+        weights[beside] = 0.5 * (high - low) * np.cos(turn) * pi / count
     sin, cos, slope, _ = ellipj(argument, parameter)
     directions = (cos, sin) if a >= b else (sin, cos)
     return np.ascontiguousarray(np.stack(directions, axis=1)), weights * slope
-
-
-@lru_cache(64)
-def rooted_nodes(count):
-    """Nodes and weights on (0, 1) for an integrand that vanishes as a root at either end: Gauss-Legendre in the arc sine."""
-    x, w = unit_nodes(count)
-    turn = pi * (x - 0.5)
-    return 0.5 + 0.5 * np.sin(turn), 0.5 * pi * w * np.cos(turn)
-
-
-def sectors(distance, z, count, needle):
-    """Edges (M, S + 1) of the sectors of azimuth, about the way to the axis, in which an edged bunch is seen from outside, and nodes in each.
-
-    A needle of an ellipsoid fills three: the middle one looks at the section at the height of the probe, the outer two at what
-    stands beyond it above or below; each ends where a chord vanishes as a root.
-    """
-    reach = np.where(distance > 1.0, np.arcsin(1.0 / np.maximum(distance, 1.0)), pi)
-    if not needle:
-        return np.stack([-reach, reach], axis=1), (count,)
-    level = np.sqrt(np.clip(1.0 - z * z, 0.0, 1.0))
-    core = np.arcsin(np.minimum(1.0, level / np.maximum(distance, 1e-300)))
-    side = count // 4
-    return np.stack([-reach, -core, core, reach], axis=1), (side, count - 2 * side, side)

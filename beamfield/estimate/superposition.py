@@ -10,7 +10,9 @@ from beamfield.errors import CallError
 
 @dataclass(frozen=True, slots=True, eq=False)
 class Field:
-    """E (3, M) V/m, B (3, M) T, in the lab; doubt, estimated relative rms error; closed_form, E (3, M) of the textbook or None."""
+    """E (3, M) V/m, B (3, M) T, in the lab; doubt, estimated relative rms error; closed_form, E (3, M) of the
+    textbook or None.
+    """
 
     E: np.ndarray
     B: np.ndarray
@@ -39,9 +41,9 @@ def finite(name, array):
 def superpose(points, positions, charges, momenta, cloud=0.0, method="auto", tolerance=1e-4):
     """Lab-frame field, now, of N uniformly moving charges.
 
-    points (3, M) and positions (3, N) in m; charges (N,) or scalar in C; momenta u = gamma beta, (3,) shared or (3, N) each;
-    cloud, softening length in the rest frame of each charge [m]. Returns a Field. A charge makes no field at its own place.
-    Raises CallError for shapes that do not fit, nan, a negative cloud or an unknown method.
+    points (3, M) and positions (3, N) in m; charges (N,) or scalar in C; momenta u = gamma beta, (3,) shared or (3,
+    N) each; cloud, softening length in the rest frame of each charge [m]. Returns a Field. A charge makes no field at
+    its own place. Raises CallError for shapes that do not fit, nan, a negative cloud or an unknown method.
     Source: O. Heaviside, The Electrician 22 (1888) 147: the field of a charge in uniform motion.
     """
     from beamfield.kernels import moving_charge

@@ -1,9 +1,12 @@
 """The one way to compile a kernel: strict IEEE arithmetic, no lock held, kept on disk where a disk can be written."""
 
+from contextlib import suppress
 from pathlib import Path
 
 from numba import njit
 from numba.core import event
+
+from beamfield.kernels import notice
 
 
 def compiled(parallel=False, inline="never"):
@@ -19,24 +22,25 @@ def compiled(parallel=False, inline="never"):
     return decorate
 
 
-def on_compile(tell):
-    """Call tell() once, when the first kernel is compiled because no kept machine code fits."""
+class _Tell(event.Listener):
+    """Calls notice.tell once, when the first kernel is compiled because no kept machine code fits."""
 
-    class Once(event.Listener):
-        def on_start(self, event):
-            nonlocal tell
-            if tell is not None:
-                tell, told = None, tell
-                told()
+    def on_start(self, event):
+        told, notice.tell = notice.tell, None
+        if told is not None:
+            told()
 
-        def on_end(self, event):
-            pass
+    def on_end(self, event):
+        pass
 
-    event.register("numba:compile", Once())
+
+event.register("numba:compile", _Tell())
 
 
 def _forget_stale():
-    """Drop machine code older than the newest kernel source: numba watches one file, and a kernel may inline another."""
+    """Drop machine code older than the newest kernel source: numba watches one file, and a kernel may inline
+    another.
+    """
     folder = Path(__file__).parent
     newest = max(path.stat().st_mtime for path in folder.glob("*.py"))
     for index in (folder / "__pycache__").glob("*.nbi"):
@@ -44,7 +48,5 @@ def _forget_stale():
             index.unlink(missing_ok=True)
 
 
-try:
+with suppress(OSError):  # a folder that cannot be written cannot be stale either
     _forget_stale()
-except OSError:
-    pass  # a folder that cannot be written cannot be stale either

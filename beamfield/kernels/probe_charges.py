@@ -1,26 +1,25 @@
 """Charges placed for each probe: the field of a bunch known as a density, as a sum of moving charges round the probe.
 
-In the frame of the bunch a charge stands at (rho cos phi, rho sin phi, rho sinh zeta) from the probe and carries the charge
-of its cell, n rho^2 cosh(zeta) drho dphi dzeta. The inverse square of its field and the size of its cell cancel: there is
-nothing to soften and no bias. Between the limits chosen here the density is smooth, so that Gauss nodes converge fast:
+In the frame of the bunch a charge stands at (rho cos phi, rho sin phi, rho sinh zeta) from the probe and carries the
+charge of its cell, n rho^2 cosh(zeta) drho dphi dzeta. The inverse square of its field and the size of its cell
+cancel: there is nothing to soften and no bias. Between the limits chosen here the density is smooth, so that Gauss
+nodes converge fast:
 
     phi    even in the angle that an elliptic section asks for; only directions that meet the bunch
-    rho    from where a ray enters the elliptic cylinder about the bunch to where it leaves it, even in asinh(rho / near):
+    rho    from where a ray enters the elliptic cylinder about the bunch to where it leaves it, even in asinh(rho /
+    near):
            `near` is how far along z the density is the same; the logarithm at the probe is mapped away
     zeta   in pairs above and below the probe as far as both reach, then the rest of the longer side
 """
 
 import math
 
-import numpy as np
 from numba import prange
 
 from beamfield.kernels.compiled import compiled
 from beamfield.kernels.moving_charge import one_charge
 
 GAUSSIAN, FLAT, PARABOLIC, COASTING = 0, 1, 2, 3
-WINDOW = 6.0  # rms lengths of a Gaussian that are kept
-ENDLESS = 11.0  # zeta beyond which the charges of a coasting beam add less than 1e-9
 
 
 @compiled(inline="always")
@@ -55,12 +54,12 @@ def spread(x, inside, pancake):
 
 
 @compiled()
-def column(x, y, z, rho, c, top, weight, along, paired, w_paired, single, w_single, gamma):
+def column(x, y, z, rho, c, top, weight, along, endless, paired, w_paired, single, w_single, gamma):
     """Sum over the charges that stand above and below one place (x, y) from a probe at height z."""
     u = math.sqrt((gamma - 1.0) * (gamma + 1.0))
     ex = ey = ez = 0.0
     if along == COASTING:
-        inner, outer, side = ENDLESS, ENDLESS, 1.0
+        inner, outer, side = endless, endless, 1.0
     else:
         inner, outer = math.asinh((top - abs(z)) / rho), math.asinh((top + abs(z)) / rho)
         side = -1.0 if z > 0.0 else 1.0
@@ -89,21 +88,25 @@ def column(x, y, z, rho, c, top, weight, along, paired, w_paired, single, w_sing
 
 
 @compiled(parallel=True)
-def probe_field(probes, scales, kinds, azimuth, w_azimuth, radial, w_radial, paired, w_paired, single, w_single, gamma, out):
+def probe_field(
+    probes, scales, kinds, window, azimuth, w_azimuth, radial, w_radial, paired, w_paired, single, w_single, gamma, out
+):
     """Fill out (3, M) with lab E / gamma at probes (3, M), given in the frame of the bunch, per unit central density.
 
     scales (a, b, c), kinds (across, along): the density is profile(x2/a2 + y2/b2) profile(z2/c2);
     azimuth (M, 2, K) and w_azimuth (M, K), directions for each probe in units of a and b; other nodes on (0, 1).
+    `window` rms lengths of a Gaussian are kept, and the charges of a coasting beam out to zeta = 2 window, where they
+    add e^(-4 window).
     """
     a, b, c = scales
     across, along = kinds
-    edge2 = WINDOW * WINDOW if across == GAUSSIAN else 1.0
+    edge2 = window * window if across == GAUSSIAN else 1.0
     for m in prange(probes.shape[1]):
         px, py, z = probes[0, m] / a, probes[1, m] / b, probes[2, m]
         d2 = px * px + py * py
         inside = d2 < edge2
         pancake = c * c < a * b
-        top = c * (WINDOW if along == GAUSSIAN else 1.0)
+        top = c * (window if along == GAUSSIAN else 1.0)
         near = max(abs(c - abs(z)), 0.05 * c) if along == FLAT else c
         ex = ey = ez = 0.0
         for i in range(azimuth.shape[2]):
@@ -124,7 +127,20 @@ def probe_field(probes, scales, kinds, azimuth, w_azimuth, radial, w_radial, pai
                 if weight > 0.0:
                     x, y = r * a * cos, r * b * sin
                     fx, fy, fz = column(
-                        x, y, z, r * stretch, c, top, weight, along, paired, w_paired, single, w_single, gamma
+                        x,
+                        y,
+                        z,
+                        r * stretch,
+                        c,
+                        top,
+                        weight,
+                        along,
+                        2.0 * window,
+                        paired,
+                        w_paired,
+                        single,
+                        w_single,
+                        gamma,
                     )
                     ex += fx
                     ey += fy

@@ -1,14 +1,13 @@
 """Charges on rays from each probe: the field of an ellipsoid, full or parabolic, as a sum of moving charges.
 
-In the frame of the bunch a ray leaves the probe at azimuth phi and slope h = dz/drho = k sinh(eta). Two charges stand on its
-chord through the ellipsoid, at Gauss nodes, and carry n rho^2 drho dh dphi: exact along the chord for a density of second
-degree, with nothing to soften. From inside rays go out in pairs, up and down, and the roots in the two chords cancel; from
-outside only the slopes of the tangent cone count.
+In the frame of the bunch a ray leaves the probe at azimuth phi and slope h = dz/drho = k sinh(eta). Two charges stand
+on its chord through the ellipsoid, at Gauss nodes, and carry n rho^2 drho dh dphi: exact along the chord for a
+density of second degree, with nothing to soften. From inside rays go out in pairs, up and down, and the roots in the
+two chords cancel; from outside only the slopes of the tangent cone count.
 """
 
 import math
 
-import numpy as np
 from numba import prange
 
 from beamfield.kernels.compiled import compiled
@@ -61,8 +60,8 @@ def two_charges(p, cos, sin, w, scales, degree, weight, u, gamma):
 def ray_field(probes, scales, degree, azimuth, w_azimuth, paired, w_paired, single, w_single, gamma, out):
     """Fill out (3, M) with lab E / gamma at probes (3, M), given in the frame of the bunch, per unit central density.
 
-    scales (a, b, c), semi-axes there; degree 0 or 2, density 1 or 1 - x2/a2 - y2/b2 - z2/c2 inside; azimuth (M, 2, K) and
-    w_azimuth (M, K), directions for each probe in units of a and b; paired and single, nodes on (0, 1) for eta.
+    scales (a, b, c), semi-axes there; degree 0 or 2, density 1 or 1 - x2/a2 - y2/b2 - z2/c2 inside; azimuth (M, 2, K)
+    and w_azimuth (M, K), directions for each probe in units of a and b; paired and single, nodes on (0, 1) for eta.
     """
     a, b, c = scales
     u = math.sqrt((gamma - 1.0) * (gamma + 1.0))

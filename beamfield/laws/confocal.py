@@ -5,13 +5,17 @@ With m^2(s) = sum_j x_j^2 / (a_j^2 + s) and Delta^2(s) = prod_j (a_j^2 + s), the
     E_i = 2 pi prod_j(a_j) x_i  integral_lambda^inf  rho(m^2(s)) ds / ((a_i^2 + s) Delta(s))
 
 where lambda = 0 inside the edge and m^2(lambda) = 1 outside.
-Source: O. D. Kellogg, Foundations of Potential Theory, 1929, ch. VII, sec. 6 (from memory of it); in two dimensions the same.
+Source: O. D. Kellogg, Foundations of Potential Theory, 1929, ch. VII, sec. 6 (from memory of it); in two dimensions
+the same.
 """
 
 import numpy as np
 
 STEP = 0.25  # in ln s: the trapezoidal rule errs by exp(-pi^2 / STEP) < 1e-17 where rho is bounded for |arg s| < pi/2
-_BELOW, _ABOVE = 40.0, 38.0  # ln s runs so far below the smallest and above the largest scale; both tails are under 1e-16
+_BELOW, _ABOVE = (
+    40.0,
+    38.0,
+)  # ln s runs so far below the smallest and above the largest scale; both tails are under 1e-16
 _ROUNDS = 60
 
 
@@ -50,7 +54,7 @@ def confocal_integral(points, squares, start, profile):
     return total
 
 
-def lattice(smallest, largest):
-    """Values of s, equally spaced in ln s on a fixed lattice, from far below `smallest` to far above `largest` [m^2]."""
-    first, last = np.log(smallest) - _BELOW, np.log(largest) + _ABOVE
+def lattice(smallest, largest, below=_BELOW):
+    """Values of s [m^2], equally spaced in ln s, from far below `smallest` to far above `largest`."""
+    first, last = np.log(smallest) - below, np.log(largest) + _ABOVE
     return np.exp(STEP * np.arange(np.floor(first / STEP), np.ceil(last / STEP) + 1.0))

@@ -10,7 +10,7 @@ from beamfield.laws.confocal import confocal_root
 
 
 def carlson_slopes(squares):
-    """R_D(b^2, c^2, a^2), R_D(c^2, a^2, b^2), R_D(a^2, b^2, c^2) for squares (3,) or (3, M) [m^2]: same shape [1/m^3]."""
+    """R_D(b^2, c^2, a^2) and its two likes [1/m^3] for squares a^2, b^2, c^2, (3,) or (3, M) [m^2]; same shape."""
     from scipy.special import elliprd
 
     a2, b2, c2 = squares
@@ -43,7 +43,7 @@ def uniform_ellipsoid_field(points, semi_axes):
 
 
 def uniform_ellipsoid_potential(points, semi_axes):
-    """Potential (M,) [1/m] at points (3, M) [m], zero at infinity: 3/2 R_F - 1/2 sum x_i^2 R_D,i at the confocal root."""
+    """Potential (M,) [1/m] at points (3, M) [m], 0 at infinity: 3/2 R_F - 1/2 sum x_i^2 R_D,i at the confocal root."""
     from scipy.special import elliprf
 
     squares = np.asarray(semi_axes, dtype=float)[:, None] ** 2

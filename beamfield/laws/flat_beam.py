@@ -1,9 +1,10 @@
 """Infinitely long beams of unit line density: field across the beam, in its rest frame.
 
-Fields are over q / (4 pi eps0): [1/m] for one unit of line density; far away 2 / r. Points are (2, M) or (3, M); z, where
-given, is not looked at and the field along it is 0.
-Sources: I. M. Kapchinskij and V. V. Vladimirskij, Proc. Int. Conf. on High Energy Accelerators, CERN, 1959, p. 274 (uniform
-ellipse); M. Bassetti and G. A. Erskine, CERN-ISR-TH/80-06, 1980 (Gaussian); both from memory of them; the confocal integral.
+Fields are over q / (4 pi eps0): [1/m] for one unit of line density; far away 2 / r. Points are (2, M) or (3, M); z,
+where given, is not looked at and the field along it is 0.
+Sources: I. M. Kapchinskij and V. V. Vladimirskij, Proc. Int. Conf. on High Energy Accelerators, CERN, 1959, p. 274
+(uniform ellipse); M. Bassetti and G. A. Erskine, CERN-ISR-TH/80-06, 1980 (Gaussian); both from memory of them; the
+confocal integral.
 """
 
 from math import pi, sqrt
@@ -16,7 +17,7 @@ _CANCELLED = 1e-3  # a difference this small against its terms is found by the i
 
 
 def kv_field(points, semi_axes):
-    """Uniform ellipse, semi_axes (2,) [m]: E_x = 4 x / (A (A + B)), A^2 = a^2 + lambda, B^2 = b^2 + lambda, everywhere."""
+    """Uniform ellipse, semi_axes (2,) [m], anywhere: E_x = 4 x / (A (A + B)), A and B those of the confocal ellipse."""
     a, b = _confocal_axes(points, semi_axes)
     return _like(points, 4.0 * points[0] / (a * (a + b)), 4.0 * points[1] / (b * (a + b)))
 
@@ -26,7 +27,7 @@ def parabolic_field(points, semi_axes):
 
         E_x = 4 x [2 / (A (A + B)) - x^2 2 (2 A + B) / (3 A^3 (A + B)^2) - y^2 2 / (A B (A + B)^2)]
 
-    and the like for y, with the confocal A, B of `kv_field`: the confocal integral is elementary in two dimensions.
+    and the like for y, with A^2 = a^2 + lambda, B^2 = b^2 + lambda: in two dimensions the integral is elementary.
     """
     a, b = _confocal_axes(points, semi_axes)
     x, y = points[:2]
@@ -34,8 +35,8 @@ def parabolic_field(points, semi_axes):
 
 
 def gaussian_beam_field(points, sigma):
-    """Gaussian of rms sizes sigma (2,) [m]: Bassetti and Erskine's form, and the confocal integral where that form loses
-    digits (round or nearly round sections, near the centre, far away)."""
+    """Gaussian of rms sizes sigma (2,) [m]: Bassetti and Erskine's form, and the confocal integral where that form
+    loses digits (round or nearly round sections, near the centre, far away)."""
     points2 = points[:2]
     field, terms = _bassetti_erskine(points2, sigma)
     lost = ~(np.hypot(*field) > _CANCELLED * terms)
@@ -53,7 +54,7 @@ def gaussian_beam_integral(points, sigma):
 def beam_gradient(profile, sigma):
     """Slopes dE_x/dx, dE_y/dy (2,) [1/m^2] on the axis, profile "kv", "parabolic" or "gaussian", sigma (2,) [m].
 
-        dE_x/dx = n / (sigma_x (sigma_x + sigma_y)), n the density of the axis over that of a uniform ellipse of equal rms
+    dE_x/dx = n / (sigma_x (sigma_x + sigma_y)), n the density of the axis over that of a uniform ellipse of equal rms
     """
     sigma = np.asarray(sigma, dtype=float)
     return AXIS_DENSITY[profile] / (sigma * sigma.sum())

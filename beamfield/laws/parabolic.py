@@ -1,7 +1,9 @@
-"""Parabolic ellipsoid of unit charge, in its rest frame: density 15 / (8 pi a b c) (1 - m^2) inside m^2 = sum x_i^2 / a_i^2 = 1.
+"""Parabolic ellipsoid of unit charge, in its rest frame.
 
+Density 15 / (8 pi a b c) (1 - m^2) inside m^2 = sum x_i^2 / a_i^2 = 1.
 Fields are over q / (4 pi eps0): [1/m^2] for one unit of charge.
-Source: the confocal integral, O. D. Kellogg, Foundations of Potential Theory, 1929, ch. VII, sec. 6 (from memory of it).
+Source: the confocal integral, O. D. Kellogg, Foundations of Potential Theory, 1929, ch. VII, sec. 6 (from memory of
+it).
 """
 
 import numpy as np

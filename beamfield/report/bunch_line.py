@@ -17,16 +17,16 @@ def _what(bunch):
 
 
 def _size(bunch):
-    x, y, z = (brief(size, "m") for size in bunch.sigma[:2] + (bunch.sigma[2],))
-    length = "coasting" if isinf(bunch.sigma[2]) else z
+    x, y, z = (brief(size, "m") for size in bunch.sigma)
+    size = f"{x} × {y} rms, no ends" if isinf(bunch.sigma[2]) else f"{x} × {y} × {z} rms"
     spread = f"momentum spread {brief(bunch.momentum_spread)} rms" if bunch.momentum_spread else None
-    return f"{x} × {y} × {length} rms", _emittance(bunch), spread
+    return size, _emittance(bunch), spread
 
 
 def _energy(bunch):
     kinetic = kinetic_energy(bunch.beta_gamma, bunch.species.rest_energy) / ELEMENTARY_CHARGE
-    nucleons = bunch.species.nucleons
-    return f"{brief(kinetic / nucleons, 'eV')}/u kinetic" if nucleons else f"{brief(kinetic, 'eV')} kinetic"
+    nucleons = bunch.species.nucleons or 1
+    return f"{brief(kinetic / nucleons, 'eV')}{'/u' if nucleons > 1 else ''} kinetic"
 
 
 def _count(bunch):

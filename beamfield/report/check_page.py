@@ -2,6 +2,7 @@
 
 from beamfield.errors import one_line
 from beamfield.report.ink import Ink
+from beamfield.report.paragraph import hanging
 from beamfield.report.verdict_lines import STATE, summary, verdict_line, width_of
 
 
@@ -18,7 +19,7 @@ def _case(outcome, width, ink):
     for verdict in outcome.verdicts:
         yield "  " + verdict_line(verdict, outcome, width, ink)
     for warning in outcome.warnings:
-        yield f"  {'warning':{STATE}}{one_line(warning)}"
+        yield from hanging(f"  {'warning':{STATE}}", warning)
 
 
 def _total(outcomes):

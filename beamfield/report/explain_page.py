@@ -4,6 +4,13 @@ from beamfield.errors import InputError, did_you_mean
 from beamfield.estimate.catalogue import CATALOGUE, QUESTIONS
 from beamfield.report.paragraph import COLUMNS, hanging
 
+NEEDS = {
+    "bunch": "a bunch, not a coasting beam",
+    "ring": "the section `ring`",
+    "emittance": "`bunch.emittance`",
+    "density": "a shape, not a particle file",
+}
+
 
 def explain_page(name=None):
     """One result in full, or the list of all; InputError for a name that is none."""
@@ -45,7 +52,7 @@ def _entry(entry):
         "formula": entry.formula,
         "domain": entry.domain,
         "source": entry.source,
-        "needs": ", ".join(entry.needs),
+        "needs": "; ".join(NEEDS[part] for part in entry.needs),
     }
     lines = [f"{entry.name}   [{entry.unit}]", "", *hanging("  ", entry.definition), ""]
     for label, text in facts.items():

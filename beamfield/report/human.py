@@ -7,6 +7,7 @@ PREFIXES = {-15: "f", -12: "p", -9: "n", -6: "µ", -3: "m", 0: "", 3: "k", 6: "M
 PREFIXED = {"C", "A", "V", "V/m", "V/m2", "eV", "eV/c", "eV/m", "m", "rad/m", "T m", "ohm", "J", "s"}
 LARGEST = {"m": 3}  # nobody says megametre
 MOST_DIGITS = 6
+ROUNDING = 1e-12  # relative: below it, what is printed is the value itself
 BEFORE, AFTER = 6, 10  # characters left and right of a column's decimal point
 
 
@@ -41,15 +42,27 @@ def digits(value, doubt, most=MOST_DIGITS):
     return min(most, max(2, magnitude(value) - magnitude(doubt) + 1))
 
 
-def number(value, scale, digits, trim=False):
-    """The value on a scale: '-0.2431', '412.35', '3.412e-9'; trim: without idle zeros."""
+def number(value, scale, digits):
+    """The value on a scale: '-0.2431', '412.350', '3.412e-9'."""
     if not isfinite(value):
         return "none"
     mantissa = value / scale.factor / 10.0**scale.power
-    decimals = max(0, min(digits, 5 if scale.power else digits) - 1 - magnitude(mantissa))
-    text = f"{mantissa:.{decimals}f}"
-    text = text.rstrip("0").rstrip(".") if trim and decimals else text
-    return text + (f"e{scale.power}" if scale.power else "")
+    behind = min(digits, 5 if scale.power else digits) - 1
+    decimals = max(0, behind - magnitude(float(f"{mantissa:.{behind}e}")))
+    return f"{mantissa:.{decimals}f}" + (f"e{scale.power}" if scale.power else "")
+
+
+def shown(value, scale, digits):
+    """The same without the zeros that tell nothing: those behind a number that is all there."""
+    text = number(value, scale, digits)
+    whole = isfinite(value) and abs(float(text) * scale.factor - value) <= ROUNDING * abs(value)
+    return tidy(text) if whole else text
+
+
+def tidy(text):
+    """A number without zeros at the end of its decimals."""
+    mantissa, e, power = text.partition("e")
+    return (mantissa.rstrip("0").rstrip(".") if "." in mantissa else mantissa) + e + power
 
 
 def on_the_point(text):
@@ -66,7 +79,7 @@ def pretty(unit):
 def brief(value, unit="1", most=4):
     """One quantity in a sentence, without idle zeros: '1.2 nC', '6.1 mm', '3.5e12'."""
     at = scale(value, unit)
-    return f"{number(value, at, most, trim=True)} {at.unit}".rstrip()
+    return f"{tidy(number(value, at, most))} {at.unit}".rstrip()
 
 
 def share(ratio):

@@ -1,7 +1,7 @@
 """The results of a page: one row each, grouped by the question they answer."""
 
 from beamfield.estimate.catalogue import CATALOGUE, QUESTIONS
-from beamfield.report.human import AFTER, BEFORE, digits, number, on_the_point, order, scale
+from beamfield.report.human import AFTER, BEFORE, digits, number, on_the_point, order, scale, shown
 from beamfield.report.notes import difference
 
 UNIT, DOUBT = 7, 10
@@ -28,11 +28,14 @@ def heading(question, findings, width, ink):
 def row(finding, width, notes, ink):
     """Name, value with its unit, textbook value in the same unit, relative doubt, and what to beware of."""
     at, count = scale(finding.value, CATALOGUE[finding.name].unit), digits(finding.value, finding.doubt)
-    value = on_the_point(number(finding.value, at, count, trim=not finding.doubt))
-    textbook = finding.closed_form
-    textbook = " " * COLUMN if textbook is None else on_the_point(number(textbook, at, count, trim=not finding.doubt))
+    write = number if finding.doubt else shown
+    value, textbook = (_cell(write, each, at, count) for each in (finding.value, finding.closed_form))
     text = f"  {finding.name:{width}}{value}{at.unit:{UNIT}}{textbook}{_doubt(finding):>{DOUBT}}"
     return f"{text}{_flag(finding, notes, ink)}".rstrip()
+
+
+def _cell(write, value, at, count):
+    return " " * COLUMN if value is None else on_the_point(write(value, at, count))
 
 
 def _doubt(finding):

@@ -1,13 +1,13 @@
 """Limits and what became of them, in words."""
 
 from beamfield.estimate.catalogue import CATALOGUE
-from beamfield.report.human import brief, digits, share
+from beamfield.report.human import digits, scale, share, shown
 
 STATE = 10  # characters of the word that a line opens with
 
 
 def verdict_line(verdict, outcome, width, ink):
-    """'met  |tune_shift_y| < 0.25   0.2430   2.8 % left'."""
+    """'met  |tune_shift_y| < 0.25   0.2430   2.8 % to spare'."""
     state = ink.calm(f"{'met':{STATE}}") if verdict.met else ink.alarm(f"{'BROKEN':{STATE}}")
     return f"{state}{verdict.limit.text:{width}}  {_value(verdict, outcome):>14}   {_room(verdict, outcome)}"
 
@@ -29,12 +29,13 @@ def width_of(verdicts):
 
 def _value(verdict, outcome):
     name = verdict.limit.result
-    return brief(verdict.value, CATALOGUE[name].unit, digits(verdict.value, outcome[name].doubt))
+    at = scale(verdict.value, CATALOGUE[name].unit)
+    return f"{shown(verdict.value, at, digits(verdict.value, outcome[name].doubt))} {at.unit}".rstrip()
 
 
 def _room(verdict, outcome):
     finding, limit = outcome[verdict.limit.result], verdict.limit
-    room = f"{share(verdict.margin)} {'left' if verdict.met else 'over' if limit.comparison[0] == '<' else 'short'}"
+    room = f"{share(verdict.margin)} {'to spare' if verdict.met else 'over' if limit.comparison[0] == '<' else 'short'}"
     if not finding.valid:
         room += ", outside the domain of the estimate"
     if abs(verdict.value - limit.bound) <= finding.doubt:

@@ -64,7 +64,8 @@ def test_other_words_are_refused(word):
     [
         ("Ar", 99, 8, "near it are .*Ar-53, Ar-54"),
         ("He", 5, 2, "He-3, He-4, He-6, He-8"),
-        ("Xx", 3, 1, "did you mean Xe"),
+        ("Uu", 238, 1, "called 'Uu'; did you mean 'U'?"),
+        ("Qq", 238, 1, "called 'Qq'; give the symbol"),
         ("Og", 294, 1, "from hydrogen to lawrencium"),
         ("Ar", 40, 19, "from 1 to 18"),
         ("Ar", 40, 0, "from 1 to 18"),

@@ -8,10 +8,10 @@ from tests.report.made_outcomes import BARE, OVERFULL, RING
 def test_the_page():
     assert check_page([RING, OVERFULL, BARE]).splitlines() == [
         "ring.yaml  Injection plateau, nominal fill: the limit is met",
-        "  met       |tune_shift_y| < 0.25                     0.243052   2.8 % left",
+        "  met       |tune_shift_y| < 0.25                     0.243052   2.8 % to spare",
         "  warning   the footprint reaches the half integer",
         "overfull.yaml  Injection plateau, twice the fill: 2 of 3 limits broken",
-        "  met       |tune_shift_y| < 0.25                     0.243052   2.8 % left",
+        "  met       |tune_shift_y| < 0.25                     0.243052   2.8 % to spare",
         "  BROKEN    |tune_shift_x| < 0.2                      0.201346   0.67 % over",
         "  BROKEN    |field_gradient_x| > 412345.7 V/m2   412.346 kV/m²   5e-8 short, within the doubt",
         "  warning   the footprint reaches the half integer",

@@ -2,7 +2,19 @@
 
 import pytest
 
-from beamfield.report.human import AFTER, BEFORE, brief, digits, number, on_the_point, order, pretty, scale, share
+from beamfield.report.human import (
+    AFTER,
+    BEFORE,
+    brief,
+    digits,
+    number,
+    on_the_point,
+    order,
+    pretty,
+    scale,
+    share,
+    shown,
+)
 
 
 @pytest.mark.parametrize(
@@ -55,6 +67,14 @@ def test_what_is_printed_is_the_value():
             at = scale(value, unit)
             half_a_digit = 0.5e-4 / 1.2345
             assert abs(float(number(value, at, 5)) * at.factor / value - 1.0) < 1.01 * half_a_digit
+
+
+@pytest.mark.parametrize(
+    ("value", "text"),
+    [(1.0 - 3.2e-9, "1.00000"), (1.0, "1"), (0.1 + 0.2, "0.3"), (3.5e12, "3.5e12"), (100.0, "100"), (0.25, "0.25")],
+)
+def test_zeros_go_where_the_number_is_all_there(value, text):
+    assert shown(value, scale(value, "1"), 6) == text
 
 
 @pytest.mark.parametrize(

@@ -4,6 +4,8 @@ from dataclasses import replace
 
 import pytest
 
+from beamfield.beam.species import Species
+from beamfield.constants import ATOMIC_MASS, ELEMENTARY_CHARGE, SPEED_OF_LIGHT
 from beamfield.estimate.finding import Finding
 from beamfield.report.ink import Ink
 from beamfield.report.text_page import text_page
@@ -82,7 +84,7 @@ def test_the_verdict_comes_first_in_words(outcome, verdict):
 
 def test_limits_show_their_margin():
     page = text_page(OVERFULL)
-    assert "met       |tune_shift_y| < 0.25                     0.243052   2.8 % left" in page
+    assert "met       |tune_shift_y| < 0.25                     0.243052   2.8 % to spare" in page
     assert "BROKEN    |tune_shift_x| < 0.2                      0.201346   0.67 % over" in page
 
 
@@ -124,4 +126,12 @@ def test_the_bunch_in_two_lines():
     coasting = replace(BUNCH, sigma=(6.1e-3, 4.9e-3, float("inf")), line_density=2e9, particles=None)
     first, second = lines_of(replace(RING, bunch=coasting))[2:4]
     assert "2e9 particles per metre" in first
-    assert "× coasting" in second
+    assert second.startswith("6.1 mm × 4.9 mm rms, no ends")
+
+
+def test_ions_have_their_energy_per_nucleon():
+    ion = Species("Ar-40 8+", 40 * ATOMIC_MASS, 8 * ELEMENTARY_CHARGE, nucleons=40)
+    kinetic_per_u = 11.4e6 * ELEMENTARY_CHARGE / (ATOMIC_MASS * SPEED_OF_LIGHT**2)
+    beta_gamma = (kinetic_per_u * (kinetic_per_u + 2.0)) ** 0.5
+    first = lines_of(replace(RING, bunch=replace(BUNCH, species=ion, beta_gamma=beta_gamma)))[2]
+    assert first.startswith("Ar-40 8+ · 11.4 MeV/u kinetic · ")

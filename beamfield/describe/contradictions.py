@@ -1,0 +1,73 @@
+"""Parts of a case, each good in itself, that cannot be true together."""
+
+_CHAMBER, _CATHODE, _DISPERSION = "surroundings.chamber", "surroundings.cathode.at", "ring.optics.dispersion_x"
+_TAIL_ACROSS = 3.0  # rms sizes that must fit where a bunch has no edge
+_TAIL_ALONG = 2.0
+
+
+def contradictions(reading, bunch, surroundings, ring, beamline):
+    """Say as faults, or as warnings, what of the bunch does not go with what stands round it."""
+    _fits_chamber(reading, bunch, surroundings.chamber)
+    _stands_before_cathode(reading, bunch, surroundings.cathode)
+    _has_poles_outside(reading, surroundings)
+    if ring:
+        _fits_ring(reading, bunch, ring)
+        _uses_dispersion(reading, bunch, ring.optics)
+    if beamline and beamline.start is None and not bunch.emittance:
+        reading.fault("beamline.start", "the matched beam follows from its emittance; add bunch.emittance")
+
+
+def _reach(bunch, axis, tail):
+    """Half extent [m] and how it is called: to the edge, or a number of rms sizes where there is none."""
+    edge = bunch.extent(axis)
+    return (tail * bunch.sigma[axis], f"{tail:g} rms") if edge is None else (edge, "its edge")
+
+
+def _fits_chamber(reading, bunch, chamber):
+    if chamber is None:
+        return
+    for axis, wall, name in ((0, chamber.half_width, "horizontally"), (1, chamber.half_height, "vertically")):
+        reach, called = _reach(bunch, axis, _TAIL_ACROSS)
+        if not reach < wall:
+            sides = f"{called} is {reach * 1e3:.4g} mm from the axis, the wall {wall * 1e3:.4g} mm"
+            reading.fault(_CHAMBER, f"the beam does not fit: {name} {sides}")
+
+
+def _has_poles_outside(reading, surroundings):
+    gap, chamber = surroundings.pole_half_gap, surroundings.chamber
+    if gap and chamber and gap < chamber.half_height:
+        reading.warn("surroundings.poles.half_gap", "the poles stand inside the chamber")
+
+
+def _stands_before_cathode(reading, bunch, distance):
+    if distance is None:
+        return
+    if bunch.coasting:
+        return reading.fault(_CATHODE, "a coasting beam has no centre for a cathode to stand behind")
+    reach, called = _reach(bunch, 2, _TAIL_ALONG)
+    if reach > distance:
+        message = f"the bunch reaches through the cathode: {called} is {reach:.4g} m behind its centre"
+        (reading.warn if bunch.extent(2) is None else reading.fault)(_CATHODE, message)
+    return None
+
+
+def _fits_ring(reading, bunch, ring):
+    if bunch.coasting:
+        if ring.bunches > 1:
+            reading.fault("ring.bunches", "a coasting beam is not bunched; leave it out")
+        return
+    reach, called = _reach(bunch, 2, _TAIL_ALONG)
+    spacing = ring.circumference / ring.bunches
+    if 2.0 * reach > spacing:
+        key = "bunch.size.z" if "bunch.size.z" in reading else "bunch.shape.particles"
+        reading.fault(
+            key,
+            f"bunches overlap: one is {2.0 * reach:.4g} m long (twice {called}), and {ring.bunches} in "
+            f"{ring.circumference:g} m leave {spacing:.4g} m for each",
+        )
+
+
+def _uses_dispersion(reading, bunch, optics):
+    if bunch.momentum_spread is None and optics.dispersion_x.any():
+        key = _DISPERSION if _DISPERSION in reading else "ring.optics"
+        reading.warn(key, "the dispersion is ignored: without bunch.momentum_spread it widens nothing")

@@ -1,0 +1,120 @@
+"""How strong is the field of the bunch, and what does it do to a particle in it?"""
+
+import numpy as np
+
+from beamfield.estimate.centre import peak_place, slopes, smooth_slopes
+from beamfield.estimate.finding import Finding
+from beamfield.estimate.frame import line_density
+from beamfield.estimate.source import asked, source_of
+from beamfield.estimate.textbook import closed_axis_field, closed_gradient
+from beamfield.laws import intensity
+
+AXES = "xyz"
+LONG = 10.0  # rest-frame aspect above which a bunch counts as long
+NEUTRALISED = "the neutralising background is not in this value"
+
+
+def axes_of(bunch):
+    return (0, 1) if bunch.coasting else (0, 1, 2)
+
+
+def gradients(bunch, numerics):
+    """Slopes at the centre (A,), their doubts (A,), closed forms (A,) or None, and the method."""
+    closed, axes = closed_gradient(bunch), axes_of(bunch)
+    if numerics.method == "closed-form" and closed is not None:
+        closed = closed[list(axes)]
+        return closed, 1e-9 * abs(closed), closed, "closed form"
+    source = source_of(bunch, numerics)
+    law = slopes if bunch.macro is None else smooth_slopes
+    sigma = np.where(np.isfinite(bunch.sigma), bunch.sigma, 1.0)
+    value, doubt = asked(source, lambda field: law(field, sigma, axes))
+    return value, doubt, None if closed is None else closed[list(axes)], source.method
+
+
+def self_force(bunch, surroundings, ring, numerics):
+    """Findings on the strength of the field and on the forces it exerts."""
+    yield _perveance(bunch, surroundings)
+    remarks = (NEUTRALISED,) if surroundings.neutralisation else ()
+    found = gradients(bunch, numerics)
+    yield from _findings("field_gradient", found, 1.0, remarks)
+    kappas = tuple(part * _bend(bunch) if isinstance(part, np.ndarray) else part for part in found)
+    yield from _findings("defocusing", kappas, 1.0, remarks)
+    yield _plasma(kappas, remarks)
+    for axis in axes_of(bunch):
+        yield from _peaks(bunch, numerics, axis, remarks)
+
+
+def _bend(bunch):
+    """kappa over dE/dx: q / (gamma^3 m beta^2 c^2) [1/V]."""
+    return intensity.acceleration(1.0, bunch.species.charge, bunch.species.mass, bunch.beta_gamma)
+
+
+def _perveance(bunch, surroundings):
+    species = bunch.species
+    current = intensity.current(species.charge, line_density(bunch)[0], bunch.velocity)
+    value = intensity.perveance(current, bunch.beta_gamma, species.characteristic_current, surroundings.neutralisation)
+    remarks = ()
+    if not bunch.coasting and bunch.aspect < LONG:
+        remarks = (f"the bunch is only {bunch.aspect:.3g} times longer than wide in its own frame: no long beam",)
+    return Finding("perveance", float(value), 0.0, None, "closed form", remarks, not remarks)
+
+
+def _findings(family, found, factor, remarks):
+    values, doubts, closed, method = found
+    for row, value in enumerate(values):
+        textbook = None if closed is None else float(closed[row])
+        yield Finding(f"{family}_{AXES[row]}", float(value), float(abs(doubts[row])), textbook, method, remarks)
+
+
+def _plasma(kappas, remarks):
+    values, doubts, closed, method = kappas
+    value = intensity.plasma_wavelength(*_three(values))
+    doubt = 0.5 * value * float(np.linalg.norm(doubts)) / float(np.sum(values))
+    textbook = None if closed is None else float(intensity.plasma_wavelength(*_three(closed)))
+    return Finding("plasma_wavelength", float(value), doubt, textbook, method, remarks)
+
+
+def _three(values):
+    return (*values, 0.0) if len(values) == 2 else tuple(values)
+
+
+def _peaks(bunch, numerics, axis, remarks):
+    edge = bunch.extent(axis)
+    closed_peak = None
+    if bunch.shape is not None:
+        place = (
+            peak_place(lambda places: _closed(bunch, axis, places), bunch.sigma[axis], edge)
+            if _has(bunch, axis)
+            else None
+        )
+        closed_peak = None if place is None else float(abs(_closed(bunch, axis, np.array([place]))[0]))
+    if numerics.method == "closed-form" and closed_peak is not None:
+        value, doubt, method = closed_peak, 1e-9 * closed_peak, "closed form"
+    else:
+        source = source_of(bunch, numerics)
+        place = peak_place(lambda places: _along(source.fields[0], axis, places), bunch.sigma[axis], edge)
+        value, doubt = asked(source, lambda field: float(abs(_along(field, axis, np.array([place]))[0])))
+        method = source.method
+    bend = abs(_bend(bunch))
+    yield Finding(f"peak_field_{AXES[axis]}", value, float(doubt), closed_peak, method, remarks)
+    if axis < 2:
+        closed_kick = None if closed_peak is None else bend * closed_peak
+        yield Finding(f"peak_kick_{AXES[axis]}", bend * value, bend * float(doubt), closed_kick, method, remarks)
+    else:
+        work = intensity.energy_change(1.0, bunch.species.charge)
+        closed_work = None if closed_peak is None else work * closed_peak
+        yield Finding("peak_energy_change_z", work * value, work * float(doubt), closed_work, method, remarks)
+
+
+def _has(bunch, axis):
+    return closed_axis_field(bunch, axis, np.array([bunch.sigma[axis]])) is not None
+
+
+def _closed(bunch, axis, places):
+    return closed_axis_field(bunch, axis, places)
+
+
+def _along(field, axis, places):
+    points = np.zeros((3, len(places)))
+    points[axis] = places
+    return field(points)[axis]
