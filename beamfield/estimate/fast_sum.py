@@ -6,16 +6,16 @@ How: kernels/tree.py, extent.py, expansion.py, moments.py, far_field.py, local_f
 """
 
 from dataclasses import dataclass
-from math import comb, floor, log2, log10
+from math import floor, log2, log10
 
 import numpy as np
 
 from beamfield.kernels.expansion import tables
-from beamfield.kernels.extent import SPREAD, measure
+from beamfield.kernels.extent import COLUMNS, measure
 from beamfield.kernels.moments import gather_moments
 from beamfield.kernels.moving_charge import superpose
 from beamfield.kernels.traversal import Rules, Side, walk
-from beamfield.kernels.tree import plant, scatter
+from beamfield.kernels.tree import plant
 
 CHECKED = 96  # points at which a result is compared with the direct sum
 
@@ -53,9 +53,8 @@ def fast_field(points, positions, charges, tolerance, cloud=0.0, order=5, eps=7e
     t = tables(order, folded)
     tree, places, number = plant(positions, q, leaf, unit)
     tick()
-    sheets = np.zeros((len(tree.first), SPREAD + order + 1))
-    binomial = np.array([[comb(i, j) for j in range(order + 1)] for i in range(order + 1)], float)
-    measure(places, tree, binomial, sheets)
+    sheets = np.zeros((len(tree.first), COLUMNS))
+    measure(places, tree, order, sheets)
     tick()
     moments = np.zeros((len(tree.first), len(t.kept)))
     gather_moments(places, tree, sheets, t, moments)
@@ -64,24 +63,24 @@ def fast_field(points, positions, charges, tolerance, cloud=0.0, order=5, eps=7e
     target = source
     if points is not None:
         tt, tp, tn = plant(points, np.ones(m), tleaf, unit)
-        ts = np.zeros((len(tt.first), SPREAD + order + 1))
-        measure(tp, tt, binomial, ts)
+        ts = np.zeros((len(tt.first), COLUMNS))
+        measure(tp, tt, order, ts)
         target = Side(tt, tp, ts, np.zeros((0, 0)))
         number = tn
     tt = target.tree
     size = tt.last - tt.first
-    most = size[0] / max(1, min(256, len(size) / 200))
+    most = size[0] / max(1, min(256, len(size) / 400))
     tasks = np.flatnonzero((size <= most) & np.r_[True, size[tt.parent[1:]] > most] | (tt.child < 0) & (size > most))
     pairs = 0.4 * len(t.climb) + 0.25 * 4 * len(t.contract)
     ranked = 0.4 * len(t.climb) + 0.25 * 4 * t.forces
     if not single: pairs /= 3; ranked /= 3
-    rules = Rules(eps**2 * scale, (cloud / unit) ** 2, pairs, ranked, binomial[order].copy(), single)
+    rules = Rules(eps**2 * scale, (cloud / unit) ** 2, pairs, ranked, order, single, tleaf)
     field = np.zeros((3, target.places.shape[1]))
     tick()
     walk(target, source, t, rules, tasks, field)
     tick()
-    out = np.empty((3, m))
-    scatter(field, number, tt, top / unit**2, out)
+    field *= top / unit**2
+    out = np.take(field, number, axis=1)
     tick()
     doubt = np.sqrt(((out[:, pick] - ref) ** 2).sum() / (ref**2).sum())
     if info is not None:

@@ -164,6 +164,7 @@ def tables(order, folded):
     unfold = folding(wide) if folded else []
     climb, weight, level = climbing(order, exponents(0, order, narrow_z), at_wide)
     pairs = [(n, j) for n in local for j in kept if sum(n) + sum(j) <= order]
+    by_source = sorted(pairs, key=lambda pair: at_kept[pair[1]])  # neighbours add to different sums, none waits
     products = [(local.index(n), at_wide[add(n, j)], at_kept[j]) for n, j in pairs]
     contract = in_steps(products, len(wide), len(kept))
     return Tables(
@@ -181,7 +182,7 @@ def tables(order, folded):
         level=np.array(level),
         contract=unsigned(contract, 1 + 2 * STEP, LANES),
         local=unsigned([at_wide[n] for n in local], 1)[:, 0],
-        shift=unsigned([(at_wide[n], at_wide[add(n, j)], at_full[j] * LANES) for n, j in pairs], 3),
+        shift=unsigned([(at_wide[n], at_wide[add(n, j)], at_full[j] * LANES) for n, j in by_source], 3),
         gradient=unsigned([[at_wide[add(k, e)] for k in kept] for e in AXES], len(kept)),
         moments=sum(sum(k) < order and k[2] > 1 for k in wide) if folded else 0,
         forces=sum(sum(local[line[0]]) == 1 for line in contract),

@@ -7,11 +7,11 @@ LANES source cells at a time; X, D, M, O are flat with LANES numbers a row (expa
 
 import numpy as np
 
-from beamfield.kernels.compiled import compiled
+from beamfield.kernels.compiled import inner
 from beamfield.kernels.lanes import LANES, add_products, minus_both, scaled, times, times_plus
 
 
-@compiled()
+@inner
 def derivatives(x, cloud2, tables, base, d):
     """Fill d (wide rows) at separations x (3 rows); base is scratch of order + 2 rows; sweeps as in `climbing`."""
     order = tables.level.shape[0] - 1
@@ -30,21 +30,21 @@ def derivatives(x, cloud2, tables, base, d):
     unfold(tables.unfold_at, d)
 
 
-@compiled()
+@inner
 def climb_once(climb, weight, first, last, x, d):
     """One sweep: R^m from R^{m+1}, in place."""
     for i in range(first, last):
         times_plus(d, climb[i, 0], x, climb[i, 2], climb[i, 1], weight[i], climb[i, 3])
 
 
-@compiled()
+@inner
 def unfold(rows, d):
     """D_{a,b,2} = - D_{a+2,b,0} - D_{a,b+2,0}."""
     for i in range(rows.shape[0]):
         minus_both(d, rows[i, 0], rows[i, 1], rows[i, 2])
 
 
-@compiled()
+@inner
 def contract(steps, count, d, m, out):
     """out_n += sum_j d_{n+j} m_j over the first count rows of steps."""
     for i in range(count):

@@ -17,18 +17,19 @@ _ROW = ir.VectorType(ir.DoubleType(), LANES)
 _COUNT = ir.IntType(32)
 
 
-def _vectors(loop):
+def _vectors(loop, result=types.void):
     """Decorator: what the loop does, as vector instructions, emit(builder, the arguments of the loop)."""
 
     def decorate(emit):
         @type_callable(loop)
         def typed(context):
-            return wraps(loop)(lambda *kinds: types.void)
+            return wraps(loop)(lambda *kinds: result)
 
         @lower_builtin(loop, types.VarArg(types.Any))
         def lowered(context, builder, signature, values):
-            emit(builder, *(_argument(context, builder, *pair) for pair in zip(signature.args, values, strict=True)))
-            return context.get_dummy_value()
+            given = (_argument(context, builder, *pair) for pair in zip(signature.args, values, strict=True))
+            value = emit(builder, *given)
+            return context.get_dummy_value() if result is types.void else value
 
         return emit
 
@@ -149,3 +150,21 @@ def minus_from(d, t, i):
 @_vectors(minus_from)
 def _(builder, d, t, i):
     d[t] = builder.fsub(d[t], d[i])
+
+
+def row_sum(rows, at):
+    """The sum of the numbers of rows[at], halves added until one is left."""
+    row = list(rows[at : at + LANES])
+    while len(row) > 1:
+        row = [a + b for a, b in zip(row[: len(row) // 2], row[len(row) // 2 :], strict=True)]
+    return row[0]
+
+
+@_vectors(row_sum, types.float64)
+def _(builder, rows, at):
+    row, width = rows[at], LANES
+    while width > 1:
+        width //= 2
+        low, high = (ir.Constant(ir.VectorType(_COUNT, width), list(range(i, i + width))) for i in (0, width))
+        row = builder.fadd(builder.shuffle_vector(row, row, low), builder.shuffle_vector(row, row, high))
+    return builder.extract_element(row, ir.Constant(_COUNT, 0))

@@ -10,10 +10,10 @@ from typing import NamedTuple
 
 import numpy as np
 
-from beamfield.kernels.compiled import compiled
+from beamfield.kernels.compiled import inner
 from beamfield.kernels.far_field import contract, derivatives
-from beamfield.kernels.lanes import LANES, add_scaled
-from beamfield.kernels.moments import powers, sum_lanes
+from beamfield.kernels.lanes import LANES, add_scaled, row_sum
+from beamfield.kernels.moments import powers
 
 
 class Bench(NamedTuple):
@@ -30,7 +30,7 @@ class Bench(NamedTuple):
     local: np.ndarray
 
 
-@compiled()
+@inner
 def bench(tables, depth):
     """A Bench for one order and a tree of some depth."""
     kept, wide, full = tables.kept.shape[0], tables.wide, tables.power.shape[0]
@@ -46,7 +46,7 @@ def bench(tables, depth):
     )
 
 
-@compiled()
+@inner
 def inherit(work, tables, depth, parent, sheet):
     """Fill row depth of local from the row before, which belongs to the cell of sheet `parent`."""
     work.local[depth, :] = 0.0
@@ -57,7 +57,7 @@ def inherit(work, tables, depth, parent, sheet):
         work.local[depth, tables.shift[i, 0]] += work.local[depth - 1, tables.shift[i, 1]] * work.t[tables.shift[i, 2]]
 
 
-@compiled()
+@inner
 def take_cell(work, lane, sheet, source, moments):
     """Put a source cell into a lane of the batch."""
     for d in range(3):
@@ -66,7 +66,7 @@ def take_cell(work, lane, sheet, source, moments):
         work.m[i * LANES + lane] = moments[i]
 
 
-@compiled()
+@inner
 def take_place(work, lane, sheet, places, i):
     """Put a single charge into a lane of the batch."""
     for d in range(3):
@@ -76,7 +76,7 @@ def take_place(work, lane, sheet, places, i):
         work.m[k] = 0.0
 
 
-@compiled()
+@inner
 def finish_batch(work, tables, lanes, cloud2):
     """Add the first `lanes` lanes of the batch to the sum over sources."""
     for lane in range(lanes, LANES):
@@ -87,19 +87,19 @@ def finish_batch(work, tables, lanes, cloud2):
     contract(tables.contract, tables.contract.shape[0], work.d, work.m, work.o)
 
 
-@compiled()
+@inner
 def finish_cell(work, tables, depth):
     """Move the sum over sources into row depth of local, and complete that row."""
     local = work.local[depth]
     for i in range(tables.local.shape[0]):
-        local[tables.local[i]] += sum_lanes(work.o, i * LANES)
+        local[tables.local[i]] += row_sum(work.o, i * LANES)
     for k in range(work.o.shape[0]):
         work.o[k] = 0.0
     for i in range(tables.unfold.shape[0]):
         local[tables.unfold[i, 0]] = -local[tables.unfold[i, 1]] - local[tables.unfold[i, 2]]
 
 
-@compiled()
+@inner
 def field_at_places(work, tables, depth, sheet, places, low, high, field):
     """field[:, i] += the field of the local coefficients at places low .. high - 1."""
     for block in range(low, high, LANES):
@@ -115,14 +115,14 @@ def field_at_places(work, tables, depth, sheet, places, low, high, field):
         give(work.f, block, here, 1.0, field)
 
 
-@compiled()
+@inner
 def give(rows, first, count, factor, field):
     for d in range(3):
         for k in range(count):
             field[d, first + k] += factor * rows[d * LANES + k]
 
 
-@compiled()
+@inner
 def field_of_cell(work, tables, source, moments, places, low, high, cloud2, field):
     """field[:, i] += the field of a far cell at places low .. high - 1, one by one: E_e = - sum_j D_{j+e} M_j."""
     for i in range(moments.shape[0]):

@@ -9,8 +9,8 @@ both folded (expansion.py); a row of moments holds the kept ones, orders 0 .. p-
 import numpy as np
 from numba import prange
 
-from beamfield.kernels.compiled import compiled
-from beamfield.kernels.lanes import LANES, add_product, minus_from, times
+from beamfield.kernels.compiled import compiled, inner
+from beamfield.kernels.lanes import LANES, add_product, minus_from, row_sum, times
 
 
 @compiled(parallel=True)
@@ -24,7 +24,7 @@ def gather_moments(places, tree, sheets, tables, moments):
                 from_children(tree.child[v], sheets, sheets[v], tables, moments, moments[v])
 
 
-@compiled()
+@inner
 def from_places(places, low, high, sheet, tables, out):
     """Fill out with the moments of places low .. high - 1."""
     x, t = np.zeros(4 * LANES), np.empty(tables.power.shape[0] * LANES)
@@ -39,10 +39,10 @@ def from_places(places, low, high, sheet, tables, out):
         for i in range(out.shape[0]):
             add_product(total, i * LANES, x, 3 * LANES, t, tables.kept[i])
     for i in range(out.shape[0]):
-        out[i] = sum_lanes(total, i * LANES)
+        out[i] = row_sum(total, i * LANES)
 
 
-@compiled()
+@inner
 def from_children(child, sheets, sheet, tables, moments, out):
     """Fill out with the moments of a parent, from rows child and child + 1 of moments."""
     x, t, wide = np.zeros(3 * LANES), np.empty(tables.power.shape[0] * LANES), np.zeros(tables.wide)
@@ -60,7 +60,7 @@ def from_children(child, sheets, sheet, tables, moments, out):
         out[i] = wide[tables.narrow[i]]
 
 
-@compiled()
+@inner
 def powers(x, power, inverse, fold, t):
     """Fill t with s^[k] of the LANES vectors s in x (3 rows), folded."""
     for k in range(LANES):
@@ -70,14 +70,3 @@ def powers(x, power, inverse, fold, t):
     for i in range(fold.shape[0]):
         minus_from(t, fold[i, 1], fold[i, 0])
         minus_from(t, fold[i, 2], fold[i, 0])
-
-
-@compiled()
-def sum_lanes(rows, at):
-    """The sum of one row, in pairs; the row is used up."""
-    half = LANES // 2
-    while half:
-        for k in range(at, at + half):
-            rows[k] += rows[k + half]
-        half //= 2
-    return rows[at]

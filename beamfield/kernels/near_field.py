@@ -11,7 +11,7 @@ precision. So is a group that reaches far out of the cell.
 
 import numpy as np
 
-from beamfield.kernels.compiled import compiled
+from beamfield.kernels.compiled import inner
 from beamfield.kernels.extent import LEAST, RADIUS
 
 BLOCK = 32  # targets carried together, and sources to a group
@@ -21,7 +21,7 @@ NOTHING = 1e-200  # added to the squared distance: a pair at distance zero adds 
 ONE = np.float32(1.0)
 
 
-@compiled()
+@inner
 def add_near(targets, low, high, centre, source, cells, count, cloud2, single, field):
     """field[:, i] += the sum over the places of the first `count` of the cells, for targets low .. high - 1.
 
@@ -61,7 +61,7 @@ def add_near(targets, low, high, centre, source, cells, count, cloud2, single, f
                 field[d, first + k] += e[b, d * BLOCK + k]
 
 
-@compiled()
+@inner
 def load(places, rows, first, count, out):
     """Rows of `count` places, filled up with the last of them."""
     for d in range(rows):
@@ -69,14 +69,14 @@ def load(places, rows, first, count, out):
             out[d * BLOCK + k] = places[d, first + min(k, count - 1)]
 
 
-@compiled()
+@inner
 def reach(centre, sheet):
     """How far from the centre a cell extends."""
     x, y, z = sheet[0] - centre[0], sheet[1] - centre[1], sheet[2] - centre[2]
     return np.sqrt(x * x + y * y + z * z) + sheet[RADIUS]
 
 
-@compiled()
+@inner
 def halves(x, centre, unit, out):
     """Rows x, y, z from the centre, times unit, as the sum of out's rows 0-2 and 3-5; its row 6, if any, is row 3 of x."""
     for d in range(3):
@@ -90,7 +90,7 @@ def halves(x, centre, unit, out):
             out[6 * BLOCK + k] = np.float32(x[3 * BLOCK + k])
 
 
-@compiled()
+@inner
 def pairs_single(x, s, count, soft, limit, e):
     """Fill e (3 rows of BLOCK) in single precision; whether no component of it is above the limit or not a number."""
     for k in range(3 * BLOCK):
@@ -114,13 +114,13 @@ def pairs_single(x, s, count, soft, limit, e):
     return beyond == 0
 
 
-@compiled()
+@inner
 def add(e, factor, total):
     for k in range(3 * BLOCK):
         total[k] += factor * np.float64(e[k])
 
 
-@compiled()
+@inner
 def pairs_double(x, s, count, soft, e):
     """e (3 rows of BLOCK) += the field in double precision."""
     for j in range(count):

@@ -13,13 +13,14 @@ Targets own what they sum, in an order that the trees alone decide. A task is a 
 from the root, repeating a little work instead of sharing it. So the bits do not depend on the number of threads.
 """
 
+from concurrent.futures import ThreadPoolExecutor
 from typing import NamedTuple
 
 import numpy as np
-from numba import parallel_chunksize, prange
+from numba import get_num_threads
 
-from beamfield.kernels.compiled import compiled
-from beamfield.kernels.extent import RADIUS, SPREAD, STRENGTH
+from beamfield.kernels.compiled import compiled, inner
+from beamfield.kernels.extent import COUNT, RADIUS, SIZE, STRENGTH, power
 from beamfield.kernels.lanes import LANES
 from beamfield.kernels.local_field import (
     bench,
@@ -35,7 +36,8 @@ from beamfield.kernels.near_field import BLOCK, add_near
 from beamfield.kernels.tree import longer
 
 TOUCH = 1.2  # radii of two far cells together, at most, over their distance
-LARGE = 4.0  # ratio of mean squares of two cells of which one is large beside the other
+LARGE = 2.0  # ratio of the sizes of two cells of which one is large beside the other
+SHARES = 16  # of the tasks to a thread
 BUFFER = 1024  # cells that are collected before they are summed
 
 
@@ -53,34 +55,40 @@ class Rules(NamedTuple):
     cloud2   softening length squared
     pairs    pairs that take as long as one source in a batch
     ranked   pairs that take as long as one far cell at one place
-    binomial (p + 1,) last row of Pascal's triangle
+    order    of the expansions
     single   whether near pairs may be done in single precision
+    crowd    target cells of at most so many places are leaves
     """
 
     limit: float
     cloud2: float
     pairs: float
     ranked: float
-    binomial: np.ndarray
+    order: int
     single: bool
+    crowd: int
 
 
 def walk(target, source, tables, rules, tasks, field):
     """Add the field at all places of the targets to field (3, n); tasks are cells, none above another, that hold them all."""
-    with parallel_chunksize(1):
-        walk_tasks(*target[:3], *source, tables, rules, tasks, field)
-
-
-@compiled(parallel=True)
-def walk_tasks(tree, places, sheets, source_tree, source_places, source_sheets, moments, tables, rules, tasks, field):
-    """As walk; parallel loops take no tuples in tuples."""
-    for t in prange(tasks.shape[0]):
-        target = Side(tree, places, sheets, moments)
-        source = Side(source_tree, source_places, source_sheets, moments)
-        walk_task(target, source, tables, rules, tasks[t], field)
+    threads = get_num_threads()
+    shares = [np.ascontiguousarray(tasks[i :: SHARES * threads]) for i in range(min(SHARES * threads, len(tasks)))]
+    if threads == 1:
+        walk_tasks(target, source, tables, rules, tasks, field)
+        return
+    with ThreadPoolExecutor(threads) as pool:
+        for done in [pool.submit(walk_tasks, target, source, tables, rules, share, field) for share in shares]:
+            done.result()
 
 
 @compiled()
+def walk_tasks(target, source, tables, rules, tasks, field):
+    """Some of the tasks."""
+    for t in range(tasks.shape[0]):
+        walk_task(target, source, tables, rules, tasks[t], field)
+
+
+@inner
 def walk_task(target, source, tables, rules, task, field):
     """Walk from the root down to cell `task` and on to all leaves below it."""
     depth = target.tree.level.shape[0] + 1
@@ -100,16 +108,22 @@ def walk_task(target, source, tables, rules, task, field):
             inherit(work, tables, d, target.sheets[target.tree.parent[a]], target.sheets[a])
         opened = sort_out(target, source, tables, rules, a, d, work, begin, opened, stack, near, apart, field)
         child = target.tree.child[a]
-        if child >= 0 and d < path.shape[0]:
+        if d < path.shape[0]:
             todo[count], level[count] = path[d], d + 1
             count += 1
-        elif child >= 0:
+        elif not is_leaf(target.tree, a, rules):
             todo[count], todo[count + 1] = child + 1, child
             level[count], level[count + 1] = d + 1, d + 1
             count += 2
 
 
-@compiled()
+@inner
+def is_leaf(tree, a, rules):
+    """Whether a target cell is not divided further; the tree may go on below it, for its sake as a source."""
+    return tree.child[a] < 0 or tree.last[a] - tree.first[a] <= rules.crowd
+
+
+@inner
 def path_to(parent, task):
     """The cells from the root to a cell."""
     length, v = 0, task
@@ -124,12 +138,13 @@ def path_to(parent, task):
     return path
 
 
-@compiled()
+@inner
 def sort_out(target, source, tables, rules, a, d, work, begin, opened, stack, near, apart, field):
     """Deal with all that the parent of cell a, at level d, left open; the list of open cells, perhaps a longer copy."""
-    sheet, low, high, leaf = target.sheets[a], target.tree.first[a], target.tree.last[a], target.tree.child[a] < 0
+    sheet, low, high = target.sheets[a], target.tree.first[a], target.tree.last[a]
+    leaf = is_leaf(target.tree, a, rules)
     first, last = source.tree.first, source.tree.last
-    places, blocked = high - low, BLOCK * ((high - low + BLOCK - 1) // BLOCK)
+    blocked = BLOCK * ((high - low + BLOCK - 1) // BLOCK)
     lanes, nears, aparts, end = 0, 0, 0, begin[d]
     for i in range(begin[d - 1], begin[d]):
         stack[0] = opened[i]
@@ -138,20 +153,21 @@ def sort_out(target, source, tables, rules, a, d, work, begin, opened, stack, ne
             waiting -= 1
             b = stack[waiting]
             other = source.sheets[b]
-            small = leaf and blocked * (last[b] - first[b]) <= rules.pairs
-            if not small and accepted(sheet, other, distance2(sheet, other), other[STRENGTH], rules):
+            small = leaf and blocked * other[COUNT] <= rules.pairs
+            size, radius = sheet[SIZE] + other[SIZE], sheet[RADIUS] + other[RADIUS]
+            if not small and accepted(size, radius, distance2(sheet, other), other[STRENGTH], rules):
                 take_cell(work, lanes, sheet, other, source.moments[b])
                 lanes += 1
-            elif not small and leaf and is_apart(target.places, low, high, sheet, other, last[b] - first[b], rules):
+            elif not small and leaf and is_apart(target.places, low, high, sheet, other, rules):
                 apart[aparts] = b
                 aparts += 1
-            elif source.tree.child[b] >= 0 and (leaf or other[SPREAD + 2] > sheet[SPREAD + 2]) and not small:
+            elif source.tree.child[b] >= 0 and (leaf or other[SIZE] > sheet[SIZE]) and not small:
                 stack[waiting], stack[waiting + 1] = source.tree.child[b] + 1, source.tree.child[b]
                 waiting += 2
             elif leaf:
                 near[nears] = b
                 nears += 1
-            elif source.tree.child[b] < 0 and is_loose(source.places, first[b], last[b], sheet, other, places, rules):
+            elif source.tree.child[b] < 0 and is_loose(source.places, first[b], last[b], sheet, other, rules):
                 for j in range(first[b], last[b]):
                     take_place(work, lanes, sheet, source.places, j)
                     lanes += 1
@@ -183,69 +199,58 @@ def sort_out(target, source, tables, rules, a, d, work, begin, opened, stack, ne
     return opened
 
 
-@compiled()
+@inner
 def distance2(sheet, other):
     x, y, z = sheet[0] - other[0], sheet[1] - other[1], sheet[2] - other[2]
     return x * x + y * y + z * z
 
 
-@compiled()
-def accepted(sheet, other, r2, charge, rules):
-    """Whether the expansion of cell B (sheet other) about cell A (sheet) is good enough at distance R.
+@inner
+def accepted(size, radius, r2, charge, rules):
+    """Whether an expansion is good enough at squared distance r2 = R^2, for cells whose sizes and radii add up to these.
 
-    The first order dropped is of relative size e = sum_k (p over k) W_k(B) W_{p-k}(A) / R^p (Dehnen 2014, eq. 13 f., from memory), and
-    the field itself is f = charge / (R^2 F) of the typical one, F. Demanded is e sqrt(f) < tolerance: strong sources are
-    taken more exactly than weak ones, as errors of many cells add at random. The radii must not reach over the distance, so
-    that the series converges; with a cloud, R^2 + a^2 stands for R^2, where its singularity is.
+    The first order that is dropped is of relative size e = sum_k (p over k) <s_B^k> <s_A^{p-k}> / R^p, the s the distances of
+    places from the centre of their cell (W. Dehnen, Comput. Astrophys. Cosmol. 1:1 (2014), from memory); by Hoelder's
+    inequality e <= (size / R)^p. The field itself is f = charge / (R^2 F) of the typical one, F. Demanded is
+
+        e sqrt(f) < tolerance:
+
+    strong sources are taken more exactly than weak ones, since many errors add up at random. Radii must not reach far over
+    the distance, so that the series converges; with a cloud, R^2 + a^2 stands for R^2, as its singularity is there.
     """
     r2 += rules.cloud2
-    reach = sheet[RADIUS] + other[RADIUS]
-    if not reach * reach < TOUCH * TOUCH * r2:
+    if not radius * radius < TOUCH * TOUCH * r2:
         return False
-    order = rules.binomial.shape[0] - 1
-    e = 0.0
-    bound = r2
-    for k in range(order + 1):
-        e += rules.binomial[k] * other[SPREAD + k] * sheet[SPREAD + order - k]
-    for k in range(order):
-        bound *= r2
-    return e * e * charge < rules.limit * bound
+    return power(size * size / r2, rules.order) * charge < rules.limit * r2
 
 
-@compiled()
-def is_apart(places, low, high, sheet, other, sources, rules):
+@inner
+def is_apart(places, low, high, sheet, other, rules):
     """Whether a far expansion of cell B is good, and worth while, at each place of the leaf A."""
-    if sources <= rules.ranked or not sheet[SPREAD + 2] > LARGE * other[SPREAD + 2]:
+    if other[COUNT] <= rules.ranked or not sheet[SIZE] > LARGE * other[SIZE]:
         return False
-    return far_enough(places, low, high, other, other[STRENGTH], rules)
+    return accepted(other[SIZE], other[RADIUS], nearest2(places, low, high, other), other[STRENGTH], rules)
 
 
-@compiled()
-def is_loose(places, low, high, sheet, other, targets, rules):
+@inner
+def is_loose(places, low, high, sheet, other, rules):
     """Whether each charge of the leaf B alone is far from the cell A, and worth while."""
-    if targets <= rules.pairs or not other[SPREAD + 2] > LARGE * sheet[SPREAD + 2]:
+    if sheet[COUNT] <= rules.pairs or not other[SIZE] > LARGE * sheet[SIZE]:
         return False
-    return far_enough(places, low, high, sheet, other[STRENGTH], rules)
+    return accepted(sheet[SIZE], sheet[RADIUS], nearest2(places, low, high, sheet), other[STRENGTH], rules)
 
 
-@compiled()
-def far_enough(places, low, high, sheet, charge, rules):
-    """Whether the nearest of some places is far enough from a cell."""
+@inner
+def nearest2(places, low, high, sheet):
+    """Squared distance of the nearest of some places from the centre of a cell."""
     nearest = np.inf
     for i in range(low, high):
         x, y, z = places[0, i] - sheet[0], places[1, i] - sheet[1], places[2, i] - sheet[2]
         nearest = min(nearest, x * x + y * y + z * z)
-    r2 = nearest + rules.cloud2
-    if not sheet[RADIUS] * sheet[RADIUS] < TOUCH * TOUCH * r2:
-        return False
-    order = rules.binomial.shape[0] - 1
-    bound = r2
-    for k in range(order):
-        bound *= r2
-    return sheet[SPREAD + order] * sheet[SPREAD + order] * charge < rules.limit * bound
+    return nearest
 
 
-@compiled()
+@inner
 def add_apart(target, source, tables, rules, low, high, cells, count, work, field):
     for i in range(count):
         b = cells[i]

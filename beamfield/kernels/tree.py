@@ -13,7 +13,7 @@ from typing import NamedTuple
 import numpy as np
 from numba import prange
 
-from beamfield.kernels.compiled import compiled
+from beamfield.kernels.compiled import compiled, inner
 
 SHARE = 0.1  # of the side of a box that either part keeps at least
 LEAF, PILE = -1, -2  # what a cell may be instead of cut
@@ -24,7 +24,6 @@ class Tree(NamedTuple):
     """Cells, level by level from the root, which is cell 0; all arrays of indices.
 
     first, last  places of a cell: first .. last - 1
-    rows, end    points of a cell, as sorted: rows .. end - 1; more than the places where points coincide
     child        first of two children, which are neighbours; -1 for a leaf
     parent       -1 for the root
     level        first cell of each level, and behind the last
@@ -32,15 +31,13 @@ class Tree(NamedTuple):
 
     first: np.ndarray
     last: np.ndarray
-    rows: np.ndarray
-    end: np.ndarray
     child: np.ndarray
     parent: np.ndarray
     level: np.ndarray
 
 
 def plant(positions, charges, leaf, unit=1.0):
-    """Tree of leaves of at most `leaf` places, places (4, n) as x, y, z and charge, and the original number of each point.
+    """Tree of leaves of at most `leaf` places, places (4, n) as x, y, z and charge, and the place of each point (N,).
 
     positions (3, N) are taken in multiples of unit, a power of two, so that nothing is rounded; charges (N,).
     """
@@ -48,11 +45,29 @@ def plant(positions, charges, leaf, unit=1.0):
     np.multiply(positions.T, 1.0 / unit, out=points[:, :3])
     points[:, 3] = np.arange(positions.shape[1])
     rows, end, child, parent, level = grow(points, leaf)
+    number = points[:, 3].astype(np.int64)
     first, last = settle(rows, end, child)
     places = np.empty((4, last[0]))
-    tree = Tree(first, last, rows, end, np.maximum(child, -1), parent, level)
-    gather(points, charges, tree, places)
-    return tree, places, points[:, 3].astype(np.int64)
+    place = np.empty(len(number), np.int64)
+    if len(number) == last[0]:
+        places[:3], places[3] = points[:, :3].T, charges[number]
+        place[number] = np.arange(len(number))
+    else:
+        begin = first_of_places(rows, end, child)
+        places[:3], places[3] = points[begin, :3].T, np.add.reduceat(charges[number], begin)
+        place[number] = np.repeat(np.arange(len(begin)), np.diff(begin, append=len(number)))
+    return Tree(first, last, np.maximum(child, LEAF), parent, level), places, place
+
+
+def first_of_places(rows, end, child):
+    """The first row of each place: every row, but only the first one of a pile."""
+    alone = np.zeros(end[0], np.int64)
+    alone[rows[child == PILE]] += 1
+    last = end[child == PILE]
+    alone[last[last < len(alone)]] -= 1
+    inside = np.cumsum(alone) > 0
+    inside[rows[child == PILE]] = False
+    return np.flatnonzero(~inside)
 
 
 @compiled(parallel=True)
@@ -81,7 +96,7 @@ def grow(points, leaf):
     return rows[:low].copy(), end[:low].copy(), child[:low].copy(), parent[:low].copy(), np.array(level)
 
 
-@compiled()
+@inner
 def longer(array, need):
     """The array, or a copy of at least twice its length where it is shorter than needed."""
     if need <= array.shape[0]:
@@ -91,7 +106,7 @@ def longer(array, need):
     return copy
 
 
-@compiled()
+@inner
 def divide(points, low, high, leaf):
     """Sort rows low .. high - 1 into two parts; where the second begins, or else LEAF or PILE."""
     axis, bottom, top = longest_side(points, low, high)
@@ -109,7 +124,7 @@ def divide(points, low, high, leaf):
     return middle
 
 
-@compiled()
+@inner
 def longest_side(points, low, high):
     """Axis, lower and upper end of the longest side of the box about rows low .. high - 1."""
     x, y, z = points[low, 0], points[low, 1], points[low, 2]
@@ -124,13 +139,13 @@ def longest_side(points, low, high):
     return (1, down, up) if up - down >= front - back else (2, back, front)
 
 
-@compiled()
+@inner
 def swap(points, i, j):
     for d in range(4):
         points[i, d], points[j, d] = points[j, d], points[i, d]
 
 
-@compiled()
+@inner
 def cut(points, low, high, axis, value):
     """Rows below the value first; where the others begin."""
     i, j = low, high - 1
@@ -144,7 +159,7 @@ def cut(points, low, high, axis, value):
         swap(points, i, j)
 
 
-@compiled()
+@inner
 def select(points, low, high, k, axis):
     """Rows low .. k - 1 no greater than row k, rows behind it no smaller: C. A. R. Hoare's FIND, pivot from a sample."""
     i, j = low, high - 1
@@ -168,7 +183,7 @@ def select(points, low, high, k, axis):
             return
 
 
-@compiled()
+@inner
 def choose(points, i, j, k, axis):
     """A value of rows i .. j that should stand near row k."""
     if j - i < 10 * SAMPLE:
@@ -178,8 +193,19 @@ def choose(points, i, j, k, axis):
     step = (j - i) // SAMPLE
     for s in range(SAMPLE):
         sample[s] = points[i + s * step, axis]
-    sample.sort()
+    sort(sample)
     return sample[min((k - i) * SAMPLE // (j - i + 1), SAMPLE - 1)]
+
+
+@inner
+def sort(values):
+    """Insertion sort of a few values."""
+    for i in range(1, values.shape[0]):
+        value, j = values[i], i
+        while j > 0 and values[j - 1] > value:
+            values[j] = values[j - 1]
+            j -= 1
+        values[j] = value
 
 
 @compiled()
@@ -197,28 +223,3 @@ def settle(rows, end, child):
             first[child[v] + 1] = first[v] + last[child[v]]
         last[v] += first[v]
     return first, last
-
-
-@compiled(parallel=True)
-def gather(points, charges, tree, places):
-    """Fill places (4, n): x, y, z and charge, in the order of the leaves."""
-    for v in prange(tree.child.shape[0]):
-        if tree.child[v] < 0:
-            shift = tree.rows[v] - tree.first[v]
-            for k in range(tree.first[v], tree.last[v]):
-                for d in range(3):
-                    places[d, k] = points[k + shift, d]
-                places[3, k] = charges[int(points[k + shift, 3])]
-            for i in range(tree.last[v] + shift, tree.end[v]):
-                places[3, tree.first[v]] += charges[int(points[i, 3])]
-
-
-@compiled(parallel=True)
-def scatter(field, order, tree, factor, out):
-    """Fill out (3, N) in the original order with factor times field (3, n) at the places."""
-    for v in prange(tree.child.shape[0]):
-        if tree.child[v] < 0:
-            for i in range(tree.rows[v], tree.end[v]):
-                k = min(tree.first[v] + i - tree.rows[v], tree.last[v] - 1)
-                for d in range(3):
-                    out[d, order[i]] = field[d, k] * factor
