@@ -92,6 +92,11 @@ def exponents(first, last, highest_z):
     ]
 
 
+def kept_rows(order, folded):
+    """How many moments a cell has."""
+    return order * order if folded else order * (order + 1) * (order + 2) // 6
+
+
 def add(*triples):
     return tuple(sum(parts) for parts in zip(*triples, strict=True))
 

@@ -20,6 +20,7 @@ import numpy as np
 from numba import get_num_threads
 
 from beamfield.kernels.compiled import compiled, inner
+from beamfield.kernels.expansion import STEP
 from beamfield.kernels.extent import COUNT, RADIUS, SIZE, STRENGTH, power
 from beamfield.kernels.lanes import LANES
 from beamfield.kernels.local_field import (
@@ -37,6 +38,7 @@ from beamfield.kernels.tree import longer
 
 TOUCH = 1.2  # radii of two far cells together, at most, over their distance
 LARGE = 2.0  # ratio of the sizes of two cells of which one is large beside the other
+TASKS, CELLS = 512, 400  # tasks at most; cells to a task, on average, at least
 SHARES = 16  # of the tasks to a thread
 BUFFER = 1024  # cells that are collected before they are summed
 
@@ -57,7 +59,6 @@ class Rules(NamedTuple):
     ranked   pairs that take as long as one far cell at one place
     order    of the expansions
     single   whether near pairs may be done in single precision
-    crowd    target cells of at most so many places are leaves
     """
 
     limit: float
@@ -66,19 +67,36 @@ class Rules(NamedTuple):
     ranked: float
     order: int
     single: bool
-    crowd: int
 
 
-def walk(target, source, tables, rules, tasks, field):
-    """Add the field at all places of the targets to field (3, n); tasks are cells, none above another, that hold them all."""
+def rules_for(tables, tolerance, typical, cloud, single):
+    """The Rules for the tolerance of one expansion and the typical field; the times of pairs were measured, roughly."""
+    pair = 1.0 if single else 3.0
+    derive, multiply = 0.4 * tables.climb.shape[0], 0.25 * STEP
+    pairs = (derive + multiply * tables.contract.shape[0]) / pair
+    ranked = (derive + multiply * tables.forces) / pair
+    limit = tolerance * tolerance * typical
+    return Rules(float(limit), float(cloud * cloud), pairs, ranked, tables.level.shape[0] - 1, single)
+
+
+def walk(target, source, tables, rules):
+    """The field (3, n) at the places of the targets; shared out among as many threads as numba is allowed."""
+    field = np.zeros((3, target.places.shape[1]))
+    tasks = tasks_of(target.tree)
     threads = get_num_threads()
     shares = [np.ascontiguousarray(tasks[i :: SHARES * threads]) for i in range(min(SHARES * threads, len(tasks)))]
-    if threads == 1:
-        walk_tasks(target, source, tables, rules, tasks, field)
-        return
     with ThreadPoolExecutor(threads) as pool:
         for done in [pool.submit(walk_tasks, target, source, tables, rules, share, field) for share in shares]:
             done.result()
+    return field
+
+
+def tasks_of(tree):
+    """Cells that hold all places, none above another, each with a share of the places or less."""
+    places = tree.last - tree.first
+    share = places[0] / min(max(len(places) / CELLS, 1.0), TASKS)
+    whole = (places <= share) | (tree.child < 0)
+    return np.flatnonzero(whole & ~np.append(False, whole[tree.parent[1:]]))
 
 
 @compiled()
@@ -111,16 +129,10 @@ def walk_task(target, source, tables, rules, task, field):
         if d < path.shape[0]:
             todo[count], level[count] = path[d], d + 1
             count += 1
-        elif not is_leaf(target.tree, a, rules):
+        elif child >= 0:
             todo[count], todo[count + 1] = child + 1, child
             level[count], level[count + 1] = d + 1, d + 1
             count += 2
-
-
-@inner
-def is_leaf(tree, a, rules):
-    """Whether a target cell is not divided further; the tree may go on below it, for its sake as a source."""
-    return tree.child[a] < 0 or tree.last[a] - tree.first[a] <= rules.crowd
 
 
 @inner
@@ -142,7 +154,7 @@ def path_to(parent, task):
 def sort_out(target, source, tables, rules, a, d, work, begin, opened, stack, near, apart, field):
     """Deal with all that the parent of cell a, at level d, left open; the list of open cells, perhaps a longer copy."""
     sheet, low, high = target.sheets[a], target.tree.first[a], target.tree.last[a]
-    leaf = is_leaf(target.tree, a, rules)
+    leaf = target.tree.child[a] < 0
     first, last = source.tree.first, source.tree.last
     blocked = BLOCK * ((high - low + BLOCK - 1) // BLOCK)
     lanes, nears, aparts, end = 0, 0, 0, begin[d]
