@@ -27,6 +27,7 @@ from typing import NamedTuple
 import numpy as np
 
 from beamfield.kernels.lanes import LANES
+
 STEP = 4  # products summed before they are stored
 AXES = ((1, 0, 0), (0, 1, 0), (0, 0, 1))
 
