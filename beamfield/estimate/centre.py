@@ -25,11 +25,14 @@ def slope_weights(count):
     return np.array([np.prod(other / (other - own)) for other, own in zip(others, squares, strict=True)])
 
 
-def slopes(field, sigma, axes=(0, 1, 2), count=5):
-    """dE_i/dx_i (A,) at the centre of a density, where E is odd, for the given axes, of a function field(points)."""
+def slopes(field, sigma, axes=(0, 1, 2)):
+    """dE_i/dx_i at the centre of a density, where E is odd, for the given axes, of a function field(points).
+
+    (2, A): from all places of the stencil, and from one less, which shows the error of the polynomial.
+    """
     values = field(stencil(sigma, axes, STENCIL)).reshape(3, len(axes), -1)
-    weights = slope_weights(count)
-    return np.array([weights @ (values[axis, row] / (STENCIL * sigma[axis]))[:count] for row, axis in enumerate(axes)])
+    ratios = np.array([values[axis, row] / (STENCIL * sigma[axis]) for row, axis in enumerate(axes)])
+    return np.array([ratios[:, :count] @ slope_weights(count) for count in (len(STENCIL), len(STENCIL) - 1)])
 
 
 def smooth_slopes(field, sigma, axes=(0, 1, 2)):
