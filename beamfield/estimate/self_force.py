@@ -4,7 +4,7 @@ from math import nan
 
 import numpy as np
 
-from beamfield.estimate.centre import peak_place, slopes, smooth_slopes
+from beamfield.estimate.centre import MISSED, peak_place, slopes, smooth_slopes
 from beamfield.estimate.finding import Finding
 from beamfield.estimate.frame import line_density
 from beamfield.estimate.source import asked, source_of
@@ -86,10 +86,11 @@ def _three(values):
 
 def _peaks(bunch, numerics, axis, remarks):
     edge = bunch.extent(axis)
+    cusp = bunch.shape is not None and bunch.shape.flat(axis)
     closed_peak = None
     if bunch.shape is not None:
         place = (
-            peak_place(lambda places: _closed(bunch, axis, places), bunch.sigma[axis], edge)
+            peak_place(lambda places: _closed(bunch, axis, places), bunch.sigma[axis], edge, cusp)
             if _has(bunch, axis)
             else None
         )
@@ -98,9 +99,9 @@ def _peaks(bunch, numerics, axis, remarks):
         value, doubt, method = closed_peak, 1e-9 * closed_peak, "closed form"
     else:
         source = source_of(bunch, numerics)
-        place = peak_place(lambda places: _along(source.fields[0], axis, places), bunch.sigma[axis], edge)
+        place = peak_place(lambda places: _along(source.fields[0], axis, places), bunch.sigma[axis], edge, cusp)
         value, doubt = asked(source, lambda field: float(abs(_along(field, axis, np.array([place]))[0])))
-        method = source.method
+        doubt, method = np.hypot(doubt, MISSED * value), source.method
     bend = abs(_bend(bunch))
     yield Finding(f"peak_field_{AXES[axis]}", value, float(doubt), closed_peak, method, remarks)
     if axis < 2:
