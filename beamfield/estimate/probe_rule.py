@@ -8,6 +8,7 @@ import numpy as np
 
 LONG = 3.0  # rest-frame aspect from which a flat section needs fewer directions of its own
 NEAREST = 1.0 - 1e-7  # squared scaled distance from the middle at which a probe counts as standing on an edge
+BESIDE = 5.0  # rms distance from the middle of a Gaussian from which only the directions that meet it count
 GATHER = 3.0  # squared rms distance from the middle of a Gaussian where directions to it start to crowd
 
 
@@ -65,9 +66,12 @@ def unit_nodes(count):
 
 
 def height_nodes(rule):
-    """Nodes for the longer part of the heights, the pairs or what is left above or below them, and for the shorter."""
+    """Nodes for the longer part of the heights, the pairs or what is left above or below them, and for the shorter.
+
+    Without faces: for the pairs, and for a probe beyond the ends, which sees no pairs.
+    """
     if not rule.faced:
-        return *unit_nodes(rule.height // 2), np.empty(0), np.empty(0)
+        return *unit_nodes(rule.height // 2), *unit_nodes(rule.height)
     few = max(6, rule.height // 5)
     return *unit_nodes((rule.height - few) // 2), *unit_nodes(few)
 
@@ -77,24 +81,26 @@ def ray_nodes(rule):
     return *unit_nodes(rule.height // 4), *unit_nodes(rule.height // 2)
 
 
-def azimuth_nodes(probes, scales, count, edged):
+def azimuth_nodes(probes, scales, count, edged, window=6.5):
     """Directions (M, 2, K), in units of the scales a and b, and weights (M, K) of the azimuth for probes (3, M).
 
     Even steps of a mean of two elliptic integrals F: one crowds the directions where a flat section is near, as
     1/(a^2 cos^2 + b^2 sin^2) wants it, the other those along the edge that a probe stands next to, or those to and
     from the middle of a Gaussian. Beside an edged bunch only the directions that meet it count, crowded at the ends
-    of their range, where the chord vanishes as a root.
+    of their range, where the chord vanishes as a root. Beside a Gaussian its window is met, in even steps: the charge
+    fades towards the ends by itself.
     """
     a, b = scales[:2]
     x, y = (probes[0] / a, probes[1] / b) if a >= b else (probes[1] / b, probes[0] / a)
     flat = 1.0 - (min(a, b) / max(a, b)) ** 2
     distance = np.hypot(x, y)
     share = 0.5 + (0.0 if scales[2] > LONG * sqrt(a * b) else 0.3 * log10(max(a, b) / min(a, b)))
-    beside = edged & (distance > 1.0)
+    beside = distance > (1.0 if edged else BESIDE)
+    reach = np.arcsin(np.minimum(1.0, (1.0 if edged else window) / distance[beside]))
     angle, weights = np.empty((len(x), count)), np.empty((len(x), count))
     outer = np.arctan2(y, x)
     angle[~beside], weights[~beside] = _round_about(outer[~beside], distance[~beside], flat, share, edged, count)
-    angle[beside], weights[beside] = _towards(outer[beside] + pi, distance[beside], flat, count)
+    angle[beside], weights[beside] = _towards(outer[beside] + pi, reach, flat, edged, count)
     directions = (np.cos(angle), np.sin(angle)) if a >= b else (np.sin(angle), np.cos(angle))
     return np.ascontiguousarray(np.stack(directions, axis=1)), weights
 
@@ -123,12 +129,12 @@ def _round_about(outer, distance, flat, share, edged, count):
     return angle, 1.0 / (count * slope)
 
 
-def _towards(centre, distance, flat, count):
-    """Angles and weights (M, K) of the directions that meet an edged bunch from beside it."""
+def _towards(centre, reach, flat, edged, count):
+    """Angles and weights (M, K) of the directions within `reach` (M,) of the centre (M,)."""
     from scipy.special import ellipj, ellipkinc
 
-    reach = np.arcsin(1.0 / distance)
     low, high = (ellipkinc(centre + side * reach, flat)[:, None] for side in (-1.0, 1.0))
-    turn = pi * ((np.arange(count) + 0.5) / count - 0.5)
-    _, _, slope, angle = ellipj(0.5 * (high + low) + 0.5 * (high - low) * np.sin(turn), flat)
-    return angle, slope * 0.5 * (high - low) * np.cos(turn) * pi / count
+    even = 2.0 * (np.arange(count) + 0.5) / count - 1.0
+    place, step = (np.sin(0.5 * pi * even), 0.5 * pi * np.cos(0.5 * pi * even)) if edged else (even, np.ones(count))
+    _, _, slope, angle = ellipj(0.5 * (high + low) + 0.5 * (high - low) * place, flat)
+    return angle, slope * (high - low) * step / count
