@@ -122,6 +122,12 @@ PARTICLES = """\
 A bunch of negative hydrogen behind the Quillmoor preinjector, nobody's measurement: the data are invented.
 A Gaussian core of 3000 particles, 400 of a halo twice as wide that count a fifth. Written by make_tables.py."""
 
-if __name__ == "__main__":
+
+def write_all():
+    """Both tables."""
     write("ring_optics.csv", OPTICS, "s,beta_x,beta_y,dispersion_x", optics(), ".4f")
     write("preinjector_bunch.csv", PARTICLES, "x,y,z,ux,uy,uz,weight", particles(), ".5g")
+
+
+if __name__ == "__main__":
+    write_all()

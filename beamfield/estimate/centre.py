@@ -2,14 +2,13 @@
 
 import numpy as np
 
-STENCIL = np.array([0.06, 0.12, 0.18, 0.24, 0.3])  # rms sizes from the centre, on both sides
+STENCIL = np.array([0.06, 0.12, 0.18, 0.24, 0.3])  # rms sizes from the centre
 PEAK_REACH = 4.0  # rms sizes along an axis within which a smooth bunch has its strongest field
 FIRST, ZOOM, ROUNDS = 24, 9, 6
 
 
-def stencil_points(sigma, axes):
-    """Points (3, 10 A) on both sides of the centre along each of the A axes."""
-    steps = np.concatenate([-STENCIL[::-1], STENCIL])
+def stencil(sigma, axes, steps):
+    """Points (3, A S) at `steps` rms sizes from the centre along each of the A axes."""
     points = np.zeros((3, len(axes), len(steps)))
     for row, axis in enumerate(axes):
         points[axis, row] = steps * sigma[axis]
@@ -17,8 +16,9 @@ def stencil_points(sigma, axes):
 
 
 def slope_weights(count):
-    """Weights (count,) of E(x)/x at the first places of the stencil for x = 0: the even polynomial through all of
-    them.
+    """Weights (count,) of E(x)/x at the first places of the stencil for x = 0.
+
+    The even polynomial through all of them.
     """
     squares = STENCIL[:count] ** 2
     others = [np.delete(squares, i) for i in range(count)]
@@ -26,22 +26,16 @@ def slope_weights(count):
 
 
 def slopes(field, sigma, axes=(0, 1, 2), count=5):
-    """dE_i/dx_i (A,) at the centre for the given axes, of a function field(points) of lab points."""
-    points = stencil_points(sigma, axes)
-    values = field(points).reshape(3, len(axes), -1)
-    half, weights = len(STENCIL), slope_weights(count)
-    result = []
-    for row, axis in enumerate(axes):
-        odd = 0.5 * (values[axis, row, half:] - values[axis, row, half - 1 :: -1])
-        result.append(weights @ (odd / (STENCIL * sigma[axis]))[:count])
-    return np.array(result)
+    """dE_i/dx_i (A,) at the centre of a density, where E is odd, for the given axes, of a function field(points)."""
+    values = field(stencil(sigma, axes, STENCIL)).reshape(3, len(axes), -1)
+    weights = slope_weights(count)
+    return np.array([weights @ (values[axis, row] / (STENCIL * sigma[axis]))[:count] for row, axis in enumerate(axes)])
 
 
 def smooth_slopes(field, sigma, axes=(0, 1, 2)):
-    """The same by least squares over the stencil, for the noisy field of particles: the slope within 0.3 rms."""
-    points = stencil_points(sigma, axes)
-    values = field(points).reshape(3, len(axes), -1)
+    """The same by least squares on both sides, for the noisy field of particles: the slope within 0.3 rms."""
     steps = np.concatenate([-STENCIL[::-1], STENCIL])
+    values = field(stencil(sigma, axes, steps)).reshape(3, len(axes), -1)
     return np.array([steps @ values[axis, row] / (steps @ steps * sigma[axis]) for row, axis in enumerate(axes)])
 
 

@@ -7,7 +7,7 @@ from math import pi, sqrt
 import numpy as np
 
 from beamfield.constants import COULOMB
-from beamfield.estimate.probe_rule import azimuth_nodes, height_nodes, ray_nodes, ray_rule, rule_for, unit_nodes
+from beamfield.estimate.probe_rule import azimuth_nodes, height_nodes, ray_rule, rule_for, unit_nodes
 from beamfield.estimate.textbook import filling, rest_scales
 
 COARSER = 7.0 / 8.0  # nodes of the coarser rule in each direction: its error stands for the doubt, and covers it
@@ -88,19 +88,27 @@ def _of_product(bunch, rule, probes, scales):
 
 
 def _of_ellipsoid(bunch, rule, probes, scales):
-    from beamfield.kernels import probe_cone, probe_rays
-
+    """Rays in pairs from inside; from outside slopes first, but azimuths first where the bunch is a thin pancake."""
     degree, out = (2 if bunch.shape.transverse == "parabolic" else 0), np.empty((4, probes.shape[1]))
     outside = np.square(probes / np.array(scales)[:, None]).sum(axis=0) > 1.0
-    coned = outside if bunch.aspect > PANCAKE else np.zeros_like(outside)
-    for chosen, by_slope in ((coned, True), (~coned, False)):
+    seen = _from_cone if bunch.aspect > PANCAKE else partial(_on_rays, paired=rule.height // 4)
+    for chosen, way in ((~outside, partial(_on_rays, paired=rule.height // 2)), (outside, seen)):
         part = np.ascontiguousarray(probes[:, chosen])
         found = np.empty((4, part.shape[1]))
-        if by_slope:
-            nodes = unit_nodes(rule.height // 4)
-            probe_cone.cone_field(part, scales, degree, rule.azimuth, *nodes, bunch.gamma, found)
-        else:
-            azimuth = azimuth_nodes(part, scales, rule.azimuth, edged=True)
-            probe_rays.ray_field(part, scales, degree, *azimuth, *ray_nodes(rule), bunch.gamma, found)
+        way(rule, part, scales, degree, bunch.gamma, found)
         out[:, chosen] = found
     return out
+
+
+def _from_cone(rule, probes, scales, degree, gamma, out):
+    from beamfield.kernels import probe_cone
+
+    probe_cone.cone_field(probes, scales, degree, rule.azimuth, *unit_nodes(rule.height // 4), gamma, out)
+
+
+def _on_rays(rule, probes, scales, degree, gamma, out, paired):
+    from beamfield.kernels import probe_rays
+
+    nodes = (*unit_nodes(paired), *unit_nodes(max(1, rule.height - 2 * paired)))
+    azimuth = azimuth_nodes(probes, scales, rule.azimuth, edged=True)
+    probe_rays.ray_field(probes, scales, degree, *azimuth, *nodes, gamma, out)

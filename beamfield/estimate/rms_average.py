@@ -20,10 +20,11 @@ def space_charge_ratio(bunch, surroundings, ring, numerics):
     """Findings on space charge against emittance."""
     if bunch.emittance is None:
         return
-    values, doubts, method = _mean_forces(bunch, numerics)
     closed = _closed_ratio(bunch)
     if numerics.method == "closed-form" and closed is not None:
         values, doubts, method = closed, 1e-9 * closed, "closed form"
+    else:
+        values, doubts, method = _mean_forces(bunch, numerics)
     for axis, name in enumerate("xy"):
         textbook = None if closed is None else float(closed[axis])
         yield Finding(f"space_charge_ratio_{name}", float(values[axis]), float(doubts[axis]), textbook, method)

@@ -10,7 +10,7 @@ from beamfield.laws import intensity
 from beamfield.laws.tune import direct_tune_shift
 
 GREAT = 0.1  # shift over tune beyond which the first-order formula is strained
-ALONG_TABLE = 8192  # charges a probe where the sizes change from row to row
+ALONG_TABLE = 16384  # charges a probe where the sizes change from row to row
 
 
 def tune_shift(bunch, surroundings, ring, numerics):

@@ -14,7 +14,7 @@ from beamfield.kernels.compiled import compiled
 from beamfield.kernels.moving_charge import one_charge
 
 LEFT, RIGHT = 0.5 - 0.5 / math.sqrt(3.0), 0.5 + 0.5 / math.sqrt(3.0)  # two Gauss nodes of (0, 1)
-STEEPEST = 18.0  # eta beyond the steepest diagonal of the ellipsoid, where e^-2 eta has nothing left to add
+STEEPEST = 16.0  # eta beyond the steepest diagonal of the ellipsoid, where e^-2 eta has nothing left to add
 
 
 @compiled(inline="always")
