@@ -73,10 +73,10 @@ def height_nodes(rule):
     return *unit_nodes((rule.height - few) // 2), *unit_nodes(few)
 
 
-def azimuth_nodes(probes, scales, count, edged, window=1.0):
+def azimuth_nodes(probes, scales, count, edged, window=6.5):
     """Directions (M, 2, K), in units of the scales a and b, and weights (M, K) of the azimuth for probes (3, M).
 
-    window, where the charge ends, in units of a and b: 1 at an edge.
+    window, rms sizes of a Gaussian that are kept.
     """
     from beamfield.kernels.azimuths import azimuths
 

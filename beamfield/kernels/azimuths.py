@@ -61,7 +61,7 @@ def azimuths(x, y, flat, portion, edged, window, angles, weights):
     for m in prange(len(x)):
         distance, outer = math.hypot(x[m], y[m]), math.atan2(y[m], x[m])
         if distance > (1.0 if edged else BESIDE):
-            reach = math.asin(min(1.0, window / distance))
+            reach = math.asin(min(1.0, (1.0 if edged else window) / distance))
             start, end = outer + math.pi - reach, outer + math.pi + reach
             first, last = elliptic(start, flat), elliptic(end, flat)
             guess = start
