@@ -65,7 +65,7 @@ def unit_nodes(count):
 def height_nodes(rule):
     """Nodes for the longer part of the heights, the pairs or what is left above or below them, and for the shorter.
 
-    Without faces: for the pairs, and for a probe beyond the ends, which sees no pairs.
+    Without faces: for the pairs, and for what only one side has, most of a bunch seen from its tail.
     """
     if not rule.faced:
         return *unit_nodes(rule.height // 2), *unit_nodes(rule.height)
