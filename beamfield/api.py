@@ -8,15 +8,8 @@ from beamfield.constants import DATA_SET
 from beamfield.errors import BeamfieldError, InputError
 
 __all__ = ["BeamfieldError", "InputError", "check_page", "draw_map", "evaluate", "explain"]
-__all__ += [
-    "field_against_straight",
-    "field_of_others",
-    "force_of_others",
-    "load",
-    "load_all",
-    "map_table",
-    "on_compile",
-]
+__all__ += ["field_against_straight", "field_of_others", "force_of_others", "load", "load_all", "map_table"]
+__all__ += ["on_compile", "on_progress"]
 __all__ += ["report_page", "schema", "schema_page", "self_field", "starter", "superpose", "version_line"]
 
 
@@ -161,6 +154,13 @@ def schema_page():
 def version_line():
     """Name, version and the set of constants."""
     return f"beamfield {__version__} ({DATA_SET})\n"
+
+
+def on_progress(watcher):
+    """Call watcher(what, fraction) now and then while something long is read or computed."""
+    from beamfield import progress
+
+    progress.watcher = watcher
 
 
 def on_compile(tell):

@@ -1,13 +1,15 @@
 """What each command does: read, ask, write, return."""
 
 from beamfield import api
-from beamfield.cli.output import colour, emit, notice
+from beamfield.cli.output import colour, emit, notice, watched
+from beamfield.cli.watch import Watch
 from beamfield.errors import Exit
 
 COMPILING = "compiling the kernels, once for this machine: up to 20 seconds"
 
 
 def report(options):
+    _watch()
     cases = api.load_all(options.cases)
     outcomes = _evaluate(cases, options)
     emit(api.report_page(outcomes, options.format, colour(options)), options.output)
@@ -15,6 +17,7 @@ def report(options):
 
 
 def check(options):
+    _watch()
     cases = api.load_all(options.cases)
     outcomes = _evaluate(cases, options)
     emit(api.check_page(outcomes, options.format, colour(options)))
@@ -22,8 +25,8 @@ def check(options):
 
 
 def map(options):
+    _watch()
     case = api.load(options.case)
-    api.on_compile(lambda: notice(COMPILING))
     if options.output:
         api.draw_map(case, options.output, options.over or (), options.at or (), options.method)
     else:
@@ -51,8 +54,13 @@ def version(_):
     return Exit.DONE
 
 
-def _evaluate(cases, options):
+def _watch():
     api.on_compile(lambda: notice(COMPILING))
+    if watched():
+        api.on_progress(Watch())
+
+
+def _evaluate(cases, options):
     return [api.evaluate(case, options.method) for case in cases]
 
 

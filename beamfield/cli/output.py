@@ -36,9 +36,14 @@ def colour(options):
     )
 
 
+def watched():
+    """Whether somebody looks at standard error."""
+    return _is_terminal(sys.stderr)
+
+
 def notice(text):
     """Tell somebody who watches what takes time."""
-    if _is_terminal(sys.stderr):
+    if watched():
         print(f"beamfield: {text}", file=sys.stderr, flush=True)
 
 

@@ -1,7 +1,8 @@
 """Files that a case names: found beside it, and read once however often the case is built anew."""
 
-from functools import lru_cache
+from functools import lru_cache, partial
 
+from beamfield import progress
 from beamfield.describe.nearest import excerpt, hint
 from beamfield.errors import InputError
 
@@ -43,7 +44,7 @@ def _stamp(path):
 def _particles(path, *_):
     from beamfield.describe import particle_file
 
-    return particle_file.read(path)
+    return particle_file.read(path, partial(progress.told, f"reading {path.name}"))
 
 
 @lru_cache(maxsize=16)

@@ -44,7 +44,9 @@ def _passed(bunch, encounter, ring, numerics):
     bend = passage_kick(1.0, bunch.species.charge, bunch.species.mass, bunch.beta_gamma, encounter.other.beta_gamma)
     value, doubt, closed = bend * value, abs(bend) * doubt, None if closed is None else bend * closed
     if encounter.aside:
-        yield from _pair("encounter_kick", value[:2], doubt[:2], None if closed is None else closed[:2], method)
+        aside = np.array(encounter.offset[:2]) != 0.0  # on the axis of symmetry there is no kick
+        kicks = [None if part is None else np.where(aside, part[:2], 0.0) for part in (value, doubt, closed)]
+        yield from _pair("encounter_kick", *kicks, method)
     value, doubt, closed = -value[2:], doubt[2:], None if closed is None else -closed[2:]
     remarks = _disrupted(encounter, value)
     yield from _pair("encounter_focusing", value, doubt, closed, method, remarks)

@@ -5,6 +5,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from beamfield import progress
 from beamfield.beam.grid import Grid
 from beamfield.beam.mapped import MAPPED, Mapped
 from beamfield.constants import SPEED_OF_LIGHT
@@ -35,6 +36,7 @@ def field_blocks(evaluate, grid, block=BLOCK):
     """Blocks of what evaluate(points (3, K)) -> {name: (3, K) or (K,)} gives on a grid, at most `block` points each."""
     for first, last in grid.runs(block):
         yield Block(first, last, evaluate(grid.points(first, last)))
+        progress.told("map", last / grid.size)
 
 
 def field_map(title, evaluate, grid, block=BLOCK):

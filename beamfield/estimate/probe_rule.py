@@ -69,7 +69,7 @@ def height_nodes(rule):
     """
     if not rule.faced:
         return *unit_nodes(rule.height // 2), *unit_nodes(rule.height)
-    few = max(6, rule.height // 5)
+    few = min(max(6, rule.height // 5), rule.height - 2)
     return *unit_nodes((rule.height - few) // 2), *unit_nodes(few)
 
 
