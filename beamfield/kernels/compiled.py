@@ -22,6 +22,11 @@ def compiled(parallel=False, inline="never"):
     return decorate
 
 
+def inner(function):
+    """Decorator for kernels that only kernels call: no door from Python is compiled, and nothing is kept on disk."""
+    return njit(nogil=True, error_model="numpy", no_cpython_wrapper=True, no_cfunc_wrapper=True)(function)
+
+
 class _Tell(event.Listener):
     """Calls notice.tell once, when the first kernel is compiled because no kept machine code fits."""
 
