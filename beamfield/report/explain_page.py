@@ -9,6 +9,11 @@ NEEDS = {
     "ring": "the section `ring`",
     "emittance": "`bunch.emittance`",
     "density": "a shape, not a particle file",
+    "train": "`bunch.train`",
+    "encounter": "the section `other_bunch`",
+    "opposing": "an opposing bunch in `other_bunch`",
+    "aside": "`other_bunch.offset` in x or y",
+    "beta": "`other_bunch.beta` or `ring`",
 }
 
 
