@@ -13,6 +13,7 @@ from beamfield.constants import COULOMB
 NEEDLE = 2.0  # rest-frame aspect beyond which clouds are drawn out to rods
 ROD = 0.4  # half length of a rod over the rms length
 WIDER = 2.0**0.25  # clouds this much wider double the bias of fourth order
+RUN, RUNS, GOLDEN = 64, 32, 0.5 * (5.0**0.5 - 1.0)  # particles kept together in a half, runs at least
 TILT = 0.01  # spread of momenta, in units of m c, beyond which each particle keeps its own
 
 
@@ -64,10 +65,16 @@ class ParticleSource:
 
 
 def half_of(macro):
-    """Every other particle: the spread between halves is the shot noise of the whole."""
-    weights = macro.weights[::2]
-    momenta = None if macro.momenta is None else macro.momenta[:, ::2]
-    return MacroParticles(macro.positions[:, ::2], weights / weights.sum(), momenta, macro.source)
+    """Half of the particles: its spread against the whole is the shot noise of the whole.
+
+    Runs of neighbours in the file, taken where the multiples of the golden ratio fall: they cut neither a sorted file
+    in two nor one of quasi-random points, of which every other may lie on one side.
+    """
+    run = min(RUN, max(1, macro.count // RUNS))
+    chosen = np.arange(macro.count) // run * GOLDEN % 1.0 < 0.5
+    weights = macro.weights[chosen]
+    momenta = None if macro.momenta is None else macro.momenta[:, chosen]
+    return MacroParticles(macro.positions[:, chosen], weights / weights.sum(), momenta, macro.source)
 
 
 def spread_of(macro):
