@@ -8,7 +8,7 @@ from functools import partial
 import numpy as np
 
 from beamfield.beam.particles import MacroParticles
-from beamfield.constants import COULOMB
+from beamfield.constants import COULOMB, SPEED_OF_LIGHT
 
 NEEDLE = 2.0  # rest-frame aspect beyond which clouds are drawn out to rods
 ROD = 0.4  # half length of a rod over the rms length
@@ -63,6 +63,13 @@ class ParticleSource:
             partial(sum_of, whole, WIDER * self.size, self.rods, self.own_momenta),
         )
 
+    def magnetic(self, points):
+        """Lab B (3, M) [T] at lab points (3, M) where particles keep their own momenta; else None."""
+        if not self.own_momenta:
+            return None
+        macro = self.bunch.macro
+        return cloud_fields(self.bunch, macro, self.size, macro.momenta, points)[3:] / SPEED_OF_LIGHT
+
 
 def half_of(macro):
     """Half of the particles: its spread against the whole is the shot noise of the whole.
@@ -97,7 +104,16 @@ def cloud_field(bunch, macro, size, rods, own_momenta, points):
         clouds.superpose_rods(points, positions, weights, bunch.gamma, length, size**2, out)
         return bunch.gamma * out
     momenta = macro.momenta if own_momenta else np.array([[0.0], [0.0], [bunch.beta_gamma]])
+    return cloud_fields(bunch, macro, size, momenta, points)[:3]
+
+
+def cloud_fields(bunch, macro, size, momenta, points):
+    """Lab E [V/m] and c B [V/m], (6, M), of round clouds, each with its momentum (3, N) or all with one (3, 1)."""
+    from beamfield.kernels import clouds
+
+    points, positions = np.ascontiguousarray(points, float), np.ascontiguousarray(macro.positions)
+    weights = COULOMB * bunch.charge * macro.weights
     momenta = np.ascontiguousarray(np.broadcast_to(momenta, (3, macro.count)))
     both = np.empty((6, points.shape[1]))
     clouds.superpose_clouds(points, positions, weights, momenta, size**2, both)
-    return both[:3]
+    return both
