@@ -23,11 +23,12 @@ class Chamber:
 
 @dataclass(frozen=True, slots=True)
 class Surroundings:
-    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m]; neutralisation, fraction of its
-    charge.
+    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m], and cathode_field at its surface [V/m];
+    neutralisation, fraction of its charge.
     """
 
     chamber: Chamber | None = None
     pole_half_gap: float | None = None
     cathode: float | None = None
     neutralisation: float = 0.0
+    cathode_field: float | None = None

@@ -91,7 +91,7 @@ def build(tree, file=TEXT, folder=Path()):
     if bunch:
         beamline = beamline and _started(beamline, bunch)
         contradictions(reading, bunch, surroundings, ring, beamline)
-        check_needs(reading, limits, bunch, ring)
+        check_needs(reading, limits, bunch, surroundings, ring)
     numerics = _numerics(reading)
     reading.finish()
     return Case(

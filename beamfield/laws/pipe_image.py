@@ -12,11 +12,11 @@ from math import pi
 import numpy as np
 
 _GAUSS = np.polynomial.legendre.leggauss(10)
-_LAST = 36.0  # K_0 / I_0 has fallen to exp(-72)
+LAST = 36.0  # K_0 / I_0 has fallen to exp(-72)
 _FIRST = 1e-12
 
 
-def nodes(form, wall, length, last=_LAST):
+def nodes(form, wall, length, last=LAST):
     """u (K,) and the weights (K,) of the integral, with K_0 / I_0 and the form factor in them.
 
     form(k) with k in 1/m; wall b [m]; length [m] sets how fast the form factor turns: panels of half a turn; last, of u.
