@@ -23,8 +23,8 @@ class Chamber:
 
 @dataclass(frozen=True, slots=True)
 class Surroundings:
-    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m], and cathode_field at its surface [V/m];
-    neutralisation, fraction of its charge.
+    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m], and cathode_field at its surface
+    [V/m]; neutralisation, fraction of its charge.
     """
 
     chamber: Chamber | None = None

@@ -4,9 +4,12 @@ from beamfield.describe import limit_text
 from beamfield.describe.tree import Sequence
 from beamfield.estimate.catalogue import CATALOGUE
 
-_NEEDS = {  # what a result needs -> whether a bunch, its surroundings and a ring or None have it; what to do if not
+_NEEDS = {  # what a result needs -> whether a bunch, what is round it and a ring or None have it; a way out
     "bunch": (lambda bunch, around, ring: not bunch.coasting, "a bunch; this beam is coasting"),
-    "ring": (lambda bunch, around, ring: ring is not None, "a ring; add the section 'ring' with circumference and tune"),
+    "ring": (
+        lambda bunch, around, ring: ring is not None,
+        "a ring; add the section 'ring' with circumference and tune",
+    ),
     "emittance": (lambda bunch, around, ring: bunch.emittance is not None, "emittances; add bunch.emittance"),
     "momentum_spread": (
         lambda bunch, around, ring: bunch.momentum_spread is not None,

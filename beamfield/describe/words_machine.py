@@ -21,7 +21,9 @@ _SURROUNDINGS = (
     Key("surroundings.poles.half_gap", "length", "Half the gap between them.", "70 mm", required=True, **_GAP),
     Key("surroundings.cathode", "section", "A conducting plane across the axis behind the bunch."),
     Key("surroundings.cathode.at", "length", "Its distance behind the centre.", "2 mm", required=True, **_GAP),
-    Key("surroundings.cathode.field", "electric field", "The field that draws from it.", "40 MV/m", above=0.0, most=1e11),
+    Key(
+        "surroundings.cathode.field", "electric field", "The field that draws from it.", "40 MV/m", above=0.0, most=1e11
+    ),
     Key(
         "surroundings.neutralisation",
         "number",

@@ -50,21 +50,26 @@ def centre_slope(bunch, surroundings, numerics):
     return Both(*(float(part[2]) for part in (values, doubts, closed)), method).plus(wall and wall.slope())
 
 
-def asked_of_axis(bunch, surroundings, numerics, question):
-    """question(along) of a function along(places (M,)) -> E_z (M,) [V/m] on the axis: Both."""
-    wall = wall_of(bunch, surroundings)
-    added = wall.field if wall else np.zeros_like
+def closed_along(bunch, surroundings, places):
+    """E_z (M,) [V/m] at places (M,) [m] on the axis by closed forms."""
+    return closed_axis_field(bunch, 2, places) + _added(bunch, surroundings, places)
 
-    def closed_along(places):
-        return closed_axis_field(bunch, 2, places) + added(places)
 
-    closed = float(question(closed_along))
+def asked_of_axis(bunch, surroundings, numerics, places, question):
+    """question(E_z (M,) [V/m] at places (M,) [m] on the axis), a number: Both."""
+    wall, added = surroundings.chamber is not None, _added(bunch, surroundings, places)
+    closed = float(question(closed_axis_field(bunch, 2, places) + added))
     suffix = ", wall by closed form" if wall else ""
     if numerics.method == "closed-form":
         return Both(closed, max(CLOSED, DIGITS) * abs(closed), closed, f"closed form{suffix}")
     source = source_of(bunch, numerics)
-    value, doubt = asked(source, lambda field: question(lambda places: _along(field, places) + added(places)))
+    value, doubt = asked(source, lambda field: question(_along(field, places) + added))
     return Both(float(value), float(doubt) + DIGITS * abs(value), closed, f"{source.method}{suffix}")
+
+
+def _added(bunch, surroundings, places):
+    wall = wall_of(bunch, surroundings)
+    return wall.field(places) if wall else np.zeros_like(places)
 
 
 def _along(field, places):
@@ -79,7 +84,9 @@ def _free_potential(bunch, numerics):
         return Both(closed, CLOSED * abs(closed), closed, "closed form")
     source = DensitySource(bunch, numerics.charges_per_probe)
     centre = np.zeros((3, 1))
-    value, other = (float(density_map(bunch, rule, centre)[3, 0]) for rule in (source.rule, source.rule.thinned(COARSER)))
+    value, other = (
+        float(density_map(bunch, rule, centre)[3, 0]) for rule in (source.rule, source.rule.thinned(COARSER))
+    )
     return Both(value, abs(other - value) + ROUNDING * abs(value), closed, source.method)
 
 

@@ -35,10 +35,10 @@ LONGITUDINAL_STRENGTH = (
         "geometry_factor",
         "1",
         "strength",
-        "The g that ties E_z on the axis to the slope of the line density, taken at the bunch centre, chamber included.",
-        "E_z = -g q / (4 pi eps0 gamma^2) dlambda/dz; long beam in a round pipe: 1 + 2 ln(b/a) uniform, 3/2 + 2 ln(b/a) "
-        "parabolic, 0.5772 + 2 ln(b/(sqrt2 sigma)) Gaussian; averaged over the beam, a = 2 rms: 0.5, 0.5112 and 0.5772 "
-        "+ 2 ln(b/a)",
+        "The g that ties E_z on the axis to the slope of the line density, at the bunch centre, chamber included.",
+        "E_z = -g q / (4 pi eps0 gamma^2) dlambda/dz; long beam in a round pipe: 1 + 2 ln(b/a) uniform, 3/2 + "
+        "2 ln(b/a) parabolic, 0.5772 + 2 ln(b/(sqrt2 sigma)) Gaussian; averaged over the beam, a = 2 rms: 0.5, 0.5112 and "
+        "0.5772 + 2 ln(b/a)",
         "bunch long against b / gamma, which is tested: invalid where g at the centre is more than a tenth from the "
         "long beam's; a level line density takes the long beam's",
         f"{_AVERAGES}; {_WALL}",
@@ -59,10 +59,10 @@ LONGITUDINAL_STRENGTH = (
         "A",
         "strength",
         "Largest steady current that the chamber lets through before the beam's own potential stops it.",
-        "I_0 (gamma^(2/3) - 1)^(3/2) / (1 + 2 ln(b/a)), I_0 = 4 pi eps0 m c^3 / abs(q); gamma and 1 + 2 ln(b/a) those of "
-        "the bunch and its profile",
-        "beam long against b / gamma, kept straight by a strong field along, not neutralised; an interpolation, good to "
-        "some per cent",
+        "I_0 (gamma^(2/3) - 1)^(3/2) / (1 + 2 ln(b/a)), I_0 = 4 pi eps0 m c^3 / abs(q); gamma and 1 + 2 ln(b/a) those "
+        "of the bunch and its profile",
+        "beam long against b / gamma, kept straight by a strong field along, not neutralised; an interpolation, good "
+        "to some per cent",
         "L. S. Bogdankevich and A. A. Rukhadze, Sov. Phys. Usp. 14, 163, 1971, from memory of it",
         ("density", "chamber"),
     ),

@@ -5,7 +5,7 @@ from dataclasses import replace
 import numpy as np
 
 from beamfield.constants import ELEMENTARY_CHARGE
-from beamfield.estimate.axis_field import asked_of_axis, centre_potential, centre_slope
+from beamfield.estimate.axis_field import asked_of_axis, centre_potential, centre_slope, closed_along
 from beamfield.estimate.centre import peak_place
 from beamfield.estimate.finding import Finding
 from beamfield.estimate.pipe_wall import LONG, mean_scale, wall_of
@@ -122,13 +122,10 @@ def _impedance(bunch, factor):
 
 def _energy_per_turn(bunch, surroundings, ring, numerics, wall, remarks):
     unit = abs(bunch.species.charge) / ELEMENTARY_CHARGE * ring.circumference
-    found = asked_of_axis(bunch, surroundings, numerics, lambda along: _peak(bunch, along)).times(unit)
+    place = peak_place(lambda places: closed_along(bunch, surroundings, places), bunch.sigma[2], bunch.extent(2))
+    field = asked_of_axis(bunch, surroundings, numerics, np.array([place]), lambda values: abs(values[0]))
+    found = field.times(unit)
     unsure = wall.remarks if wall else ()
     return Finding(
         "energy_change_per_turn", found.value, found.doubt, found.closed, found.method, remarks + unsure, not unsure
     )
-
-
-def _peak(bunch, along):
-    place = peak_place(along, bunch.sigma[2], bunch.extent(2))
-    return float(np.abs(along(np.array([place])))[0])

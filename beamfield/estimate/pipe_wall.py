@@ -1,7 +1,7 @@
 """The chamber as the bunch on its axis feels it along: what the charge induced on the wall adds on the axis, lab."""
 
 from dataclasses import dataclass
-from functools import cached_property
+from functools import cached_property, lru_cache
 
 import numpy as np
 
@@ -42,7 +42,7 @@ class Wall:
 
     @cached_property
     def nodes(self):
-        bunch, scales, shape = self.bunch, rest_scales(self.bunch), self.bunch.shape
+        scales, shape = rest_scales(self.bunch), self.bunch.shape
         sizes = shape.transverse, tuple(scales[:2]), shape.longitudinal, scales[2], shape.ellipsoid
 
         return pipe_image.nodes(
@@ -91,9 +91,11 @@ class Wall:
 
 def wall_of(bunch, surroundings):
     """The Wall about a bunch known as a density, or None in free space."""
-    chamber = surroundings.chamber
-    if chamber is None:
-        return None
+    return None if surroundings.chamber is None else _wall(bunch, surroundings.chamber)
+
+
+@lru_cache(8)
+def _wall(bunch, chamber):
     radius = wall_radius(chamber.shape, chamber.half_width, chamber.half_height)
     return Wall(bunch, radius, chamber.half_width == chamber.half_height and chamber.shape in ("round", "elliptic"))
 

@@ -55,7 +55,9 @@ def _share(ring, slope):
 
 
 def _applied(name, law, slip, share, remarks, valid):
-    value, varied, closed = (law(slip, max(0.0, part)) for part in (share.value, share.value + share.doubt, share.closed))
+    value, varied, closed = (
+        law(slip, max(0.0, part)) for part in (share.value, share.value + share.doubt, share.closed)
+    )
     if slip < 0.0 and share.value >= 1.0:
         remarks, valid = (*remarks, NO_BUCKET), False
     doubt = abs(varied - value) if np.isfinite(value) else 0.0
@@ -84,7 +86,7 @@ def _lengthening(bunch, surroundings, ring, numerics, slip, remarks):
     dense = density_along(line_profile(bunch), z, rest_scales(bunch)[2] / bunch.gamma)
     weights = weights * dense * z
     weights = weights / (weights @ z)
-    slope = asked_of_axis(bunch, surroundings, numerics, lambda along: float(weights @ along(z)))
+    slope = asked_of_axis(bunch, surroundings, numerics, z, lambda values: weights @ values)
     share = _share(ring, slope)
     return _applied("bunch_lengthening", synchrotron.lengthening, slip, share, *_outside(bunch, surroundings, remarks))
 

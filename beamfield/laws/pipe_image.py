@@ -11,21 +11,22 @@ from math import pi
 
 import numpy as np
 
-_GAUSS = np.polynomial.legendre.leggauss(10)
-LAST = 36.0  # K_0 / I_0 has fallen to exp(-72)
+_GAUSS = np.polynomial.legendre.leggauss(14)
+LAST = 20.0  # K_0 / I_0 has fallen to exp(-40), with a beam as wide as the pipe the integrand to exp(-20)
 _FIRST = 1e-12
 
 
 def nodes(form, wall, length, last=LAST):
     """u (K,) and the weights (K,) of the integral, with K_0 / I_0 and the form factor in them.
 
-    form(k) with k in 1/m; wall b [m]; length [m] sets how fast the form factor turns: panels of half a turn; last, of u.
+    form(k) with k in 1/m; wall b [m]; length [m] sets how fast the form factor turns, a panel each turn;
+    last, of u.
     """
     from scipy.special import i0e, k0e
 
-    half_turn = min(pi * wall / length, 0.25 * last)
-    edges = np.concatenate([[0.0], np.geomspace(_FIRST, 1.0, 41) * half_turn])
-    edges = np.concatenate([edges, np.linspace(half_turn, last, 2 + int((last - half_turn) / min(half_turn, 1.0)))[1:]])
+    turn = min(2.0 * pi * wall / length, 0.25 * last)
+    edges = np.concatenate([[0.0], np.geomspace(_FIRST, 1.0, 41) * turn])
+    edges = np.concatenate([edges, np.linspace(turn, last, 2 + int((last - turn) / min(turn, 1.0)))[1:]])
     middle, half = 0.5 * (edges[1:] + edges[:-1]), 0.5 * np.diff(edges)
     u = (middle[:, None] + half[:, None] * _GAUSS[0]).ravel()
     weights = (half[:, None] * _GAUSS[1]).ravel()

@@ -39,8 +39,8 @@ def tune_shift(slip, share):
 def lengthening(slip, share):
     """sigma_z / sigma_z0 - 1 [1] = (1 + sign(eta) r)^(-1/4) - 1 at one longitudinal emittance.
 
-    share r, taken at the length with space charge. The envelope equation at rest, (1 + sign(eta) r) sigma^4 = sigma_0^4,
-    sigma_0 that of no charge; infinite where space charge leaves no bucket.
+    share r, taken at the length with space charge. The envelope equation at rest:
+    (1 + sign(eta) r) sigma^4 = sigma_0^4, sigma_0 that of no charge; infinite where space charge leaves no bucket.
     """
     left = 1.0 + copysign(share, slip)
     return left**-0.25 - 1.0 if left > 0.0 else float("inf")

@@ -9,6 +9,12 @@ NEEDS = {
     "ring": "the section `ring`",
     "emittance": "`bunch.emittance`",
     "density": "a shape, not a particle file",
+    "momentum_spread": "`bunch.momentum_spread`",
+    "chamber": "`surroundings.chamber`",
+    "chamber or ends": "`surroundings.chamber` where the beam is coasting",
+    "chamber or slopes": "`surroundings.chamber` where the line density is level",
+    "cathode": "`surroundings.cathode.field`",
+    "rf": "`ring.rf`",
 }
 
 
