@@ -37,8 +37,8 @@ LONGITUDINAL_STRENGTH = (
         "strength",
         "The g that ties E_z on the axis to the slope of the line density, at the bunch centre, chamber included.",
         "E_z = -g q / (4 pi eps0 gamma^2) dlambda/dz; long beam in a round pipe: 1 + 2 ln(b/a) uniform, 3/2 + "
-        "2 ln(b/a) parabolic, 0.5772 + 2 ln(b/(sqrt2 sigma)) Gaussian; averaged over the beam, a = 2 rms: 0.5, 0.5112 and "
-        "0.5772 + 2 ln(b/a)",
+        "2 ln(b/a) parabolic, 0.5772 + 2 ln(b/(sqrt2 sigma)) Gaussian; averaged over the beam, a = 2 rms: 0.5, 0.5112 "
+        "and 0.5772 + 2 ln(b/a)",
         "bunch long against b / gamma, which is tested: invalid where g at the centre is more than a tenth from the "
         "long beam's; a level line density takes the long beam's",
         f"{_AVERAGES}; {_WALL}",
