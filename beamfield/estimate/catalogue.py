@@ -8,7 +8,8 @@ from beamfield.estimate.entries_bunch import BUNCH
 from beamfield.estimate.entries_domain import DOMAIN
 from beamfield.estimate.entries_effect import EFFECT
 from beamfield.estimate.entries_strength import STRENGTH
+from beamfield.estimate.entries_walls import WALLS
 
 __all__ = ["CATALOGUE", "QUESTIONS", "Entry"]
 
-CATALOGUE = {entry.name: entry for entry in (*BUNCH, *STRENGTH, *EFFECT, *DOMAIN)}
+CATALOGUE = {entry.name: entry for entry in (*BUNCH, *STRENGTH, *EFFECT, *WALLS, *DOMAIN)}

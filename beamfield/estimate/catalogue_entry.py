@@ -14,7 +14,7 @@ QUESTIONS = {
 class Entry:
     """name and unit of a result; question, a key of QUESTIONS; definition, one sentence; formula, plain text; domain,
     where the formula holds; source, author, title, year, equation; needs, the parts of a case without which it is
-    absent ("bunch", i.e. not coasting; "ring"; "emittance"; "density", i.e. not a particle file)."""
+    absent ("bunch", i.e. not coasting; "ring"; "emittance"; "walls", chamber or poles; "density", i.e. not a particle file)."""
 
     name: str
     unit: str
