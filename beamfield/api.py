@@ -47,10 +47,15 @@ def evaluate(case, method=None):
 
 
 def self_field(case, points):
-    """The bunch's own Field at points (3, M) [m] about its centre: E [V/m], B [T], doubt, closed_form (E or None)."""
+    """The bunch's own Field at points (3, M) [m] about its centre: E [V/m], B [T], doubt, closed_form (E or None).
+
+    Before a cathode with its mirror image; a chamber is not in it.
+    """
     from beamfield.estimate import source, superposition
 
-    return source.self_field(case.bunch, case.numerics, superposition.rows("points", points))
+    return source.self_field(
+        case.bunch, case.numerics, superposition.rows("points", points), case.surroundings.cathode
+    )
 
 
 def superpose(points, positions, charges, momenta, cloud=0.0, method="auto", tolerance=1e-4):

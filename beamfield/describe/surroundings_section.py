@@ -12,25 +12,16 @@ _SIZES = {  # shape -> the keys of half its width and half its height; None wher
     "rectangular": ("half_width", "half_height"),
 }
 _KEYS = ("radius", "half_width", "half_height", "half_gap")
-_NO_IMAGE = "read and checked; the images in it are not in the results of this version"
 
 
 def surroundings(reading):
     """Surroundings that the reading describes; what could not be read has been said and is left out."""
-    _warn_of_images(reading)
     return Surroundings(
         chamber=_chamber(reading) if _CHAMBER in reading else None,
         pole_half_gap=reading.si("surroundings.poles.half_gap"),
         cathode=reading.si("surroundings.cathode.at"),
         neutralisation=reading.si("surroundings.neutralisation", absent=0.0) or 0.0,
     )
-
-
-def _warn_of_images(reading):
-    for key in reading.written(_CHAMBER):
-        reading.warn(key, f"{_NO_IMAGE}: it is only checked that the beam fits")
-    for key in reading.written("surroundings.poles", "surroundings.cathode"):
-        reading.warn(key, _NO_IMAGE)
 
 
 def _chamber(reading):
