@@ -2,7 +2,7 @@
 
 __version__ = "0.1.0"
 
-__all__ = ["BeamfieldError", "evaluate", "load", "self_field", "superpose"]
+__all__ = ["BeamfieldError", "evaluate", "field_of_others", "force_of_others", "load", "self_field", "superpose"]
 
 
 def __getattr__(name):

@@ -8,7 +8,8 @@ from beamfield.constants import DATA_SET
 from beamfield.errors import BeamfieldError, InputError
 
 __all__ = ["BeamfieldError", "InputError", "check_page", "draw_map", "evaluate", "explain"]
-__all__ += ["field_against_straight", "load", "load_all", "map_table", "on_compile", "on_progress"]
+__all__ += ["field_against_straight", "field_of_others", "force_of_others", "load", "load_all", "map_table"]
+__all__ += ["on_compile", "on_progress"]
 __all__ += ["report_page", "schema", "schema_page", "self_field", "starter", "superpose", "version_line"]
 
 
@@ -49,12 +50,34 @@ def evaluate(case, method=None):
 def self_field(case, points):
     """The bunch's own Field at points (3, M) [m] about its centre: E [V/m], B [T], doubt, closed_form (E or None).
 
-    Before a cathode with its mirror image; a chamber is not in it.
+    Own alone: neither its train nor a bunch that it meets is in it, nor a chamber; before a cathode its mirror image
+    is.
     """
     from beamfield.estimate import source, superposition
 
     return source.self_field(
         case.bunch, case.numerics, superposition.rows("points", points), case.surroundings.cathode
+    )
+
+
+def field_of_others(case, points):
+    """Field, now, of all the other bunches of a case, its train's and the one it meets, at points as self_field.
+
+    The bunch's own field is not in it: the two add up to the whole.
+    """
+    from beamfield.estimate import companions, superposition
+
+    return companions.field_of_others(
+        case.bunch, case.surroundings, case.numerics, superposition.rows("points", points)
+    )
+
+
+def force_of_others(case, points):
+    """Force q (E + v x B) (3, M) [N] of the same on particles of the bunch, free of the difference of near equals."""
+    from beamfield.estimate import companions, superposition
+
+    return companions.force_of_others(
+        case.bunch, case.surroundings, case.numerics, superposition.rows("points", points)
     )
 
 

@@ -1,7 +1,9 @@
-"""What stands round the bunch: chamber, poles, a cathode, a neutralising background."""
+"""What stands round the bunch: chamber, poles, a cathode, a neutralising background, other bunches."""
 
 from dataclasses import dataclass
 
+from beamfield.beam.encounter import Encounter
+from beamfield.beam.train import Train
 from beamfield.errors import NonsenseError
 
 CHAMBERS = ("round", "elliptic", "plates", "rectangular")
@@ -24,10 +26,12 @@ class Chamber:
 @dataclass(frozen=True, slots=True)
 class Surroundings:
     """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m]; neutralisation, fraction of its
-    charge.
+    charge; train, the bunches before and behind; encounter, another bunch.
     """
 
     chamber: Chamber | None = None
     pole_half_gap: float | None = None
     cathode: float | None = None
     neutralisation: float = 0.0
+    train: Train | None = None
+    encounter: Encounter | None = None

@@ -11,6 +11,8 @@ from beamfield.beam.surroundings import Surroundings
 from beamfield.describe import located
 from beamfield.describe.beamline_section import beamline as read_beamline
 from beamfield.describe.bunch_section import bunch as read_bunch
+from beamfield.describe.company_section import encounter as read_encounter
+from beamfield.describe.company_section import train as read_train
 from beamfield.describe.contradictions import contradictions
 from beamfield.describe.limits_section import check_needs
 from beamfield.describe.limits_section import limits as read_limits
@@ -87,11 +89,13 @@ def build(tree, file=TEXT, folder=Path()):
     reading.read_all()
     ring, beamline, surroundings = read_ring(reading, folder), read_beamline(reading), read_surroundings(reading)
     bunch = read_bunch(reading, ring, beamline, folder)
+    company = {"train": read_train(reading, bunch), "encounter": read_encounter(reading, folder)}
+    surroundings = replace(surroundings, **company)
     limits = read_limits(reading)
     if bunch:
         beamline = beamline and _started(beamline, bunch)
         contradictions(reading, bunch, surroundings, ring, beamline)
-        check_needs(reading, limits, bunch, ring)
+        check_needs(reading, limits, bunch, ring, surroundings)
     numerics = _numerics(reading)
     reading.finish()
     return Case(

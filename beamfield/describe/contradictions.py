@@ -4,6 +4,7 @@ _CHAMBER, _CATHODE, _DISPERSION = "surroundings.chamber", "surroundings.cathode.
 _TAIL_ACROSS = 3.0  # rms sizes that must fit where a bunch has no edge
 _TAIL_ALONG = 2.0
 _FLATTEST = 1e3  # width over height, or the reverse
+_ROUNDED = 1e-3  # a full ring may be described by rounded numbers
 _SAME_MOMENTUM = 0.01  # relative difference that may be rounding, or a spread
 
 
@@ -14,6 +15,7 @@ def contradictions(reading, bunch, surroundings, ring, beamline):
     _stands_before_cathode(reading, bunch, surroundings.cathode)
     _has_poles_outside(reading, surroundings)
     _agrees_with_file(reading, bunch)
+    _fits_train(reading, bunch, surroundings.train, ring)
     if ring:
         _fits_ring(reading, bunch, ring)
         _uses_dispersion(reading, bunch, ring.optics)
@@ -86,6 +88,19 @@ def _fits_ring(reading, bunch, ring):
             f"bunches overlap: one is {2.0 * reach:.4g} m long (twice {called}), and {ring.bunches} in "
             f"{ring.circumference:g} m leave {spacing:.4g} m for each",
         )
+
+
+def _fits_train(reading, bunch, train, ring):
+    if train is None:
+        return
+    reach, called = _reach(bunch, 2, _TAIL_ALONG)
+    if train.count > 1 and 2.0 * reach > train.spacing:
+        sides = f"one is {2.0 * reach:.4g} m long (twice {called}), and their centres are {train.spacing:.4g} m apart"
+        reading.fault("bunch.train.spacing", f"bunches overlap: {sides}")
+    if ring and train.count > ring.bunches:
+        reading.fault("bunch.train.count", f"the train has {train.count} bunches, ring.bunches says {ring.bunches}")
+    if ring and train.count * train.spacing > ring.circumference * (1.0 + _ROUNDED):
+        reading.fault("bunch.train.spacing", f"the train does not fit in the ring of {ring.circumference:g} m")
 
 
 def _uses_dispersion(reading, bunch, optics):

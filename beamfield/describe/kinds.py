@@ -58,6 +58,7 @@ _EMITTANCE_WORDS = (("normalised", "geometric"), ("rms", "95%", "full"))
 _KINDS = (
     Kind("number", "a plain number", "'{}'", "", (Form(("",)), Form(("%",)))),
     Kind("length", "a length", "'{} mm' or '{} m'", "m", (Form(_LENGTHS),)),
+    Kind("spacing", "a distance between bunches", "'{} m' or '{} ns'", "m", (Form(_LENGTHS), Form(_TIMES))),
     Kind("width", "a bunch size", "'{} mm rms' (or semi, full, fwhm)", "m", (Form(_LENGTHS, (SIZE_WORDS,)),)),
     Kind(
         "bunch length",
@@ -118,6 +119,7 @@ _KINDS = (
 )
 KINDS = {kind.name: kind for kind in _KINDS}
 CONVERTED = (
+    "spacing",
     "width",
     "bunch length",
     "energy",

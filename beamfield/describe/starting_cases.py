@@ -102,4 +102,28 @@ STARTING_CASES = {  # kind -> (what it shows, the case as nested texts)
             "numerics": {"seed": "1"},
         },
     ),
+    "collider": (
+        "Two bunches that meet, and what the encounter does to the tune.",
+        {
+            "title": "Quillmoor collision point",
+            "bunch": {
+                "species": "positron",
+                "energy": "1.15 GeV total",
+                "intensity": "2.4e10 particles",
+                "shape": "gaussian",
+                "size": {"x": "200 um rms", "y": "20 um rms", "z": "9 mm rms"},
+            },
+            "other_bunch": {
+                "species": "electron",
+                "energy": "1.15 GeV total",
+                "intensity": "2.1e10 particles",
+                "shape": "gaussian",
+                "size": {"x": "200 um rms", "y": "20 um rms", "z": "9 mm rms"},
+                "direction": "opposing",
+                "offset": {"y": "1.5 um"},
+                "beta": {"x": "0.4 m", "y": "42 mm"},
+            },
+            "limits": ['"|beam_beam_tune_shift_y| < 0.05"'],
+        },
+    ),
 }

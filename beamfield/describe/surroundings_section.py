@@ -11,11 +11,15 @@ _SIZES = {  # shape -> the keys of half its width and half its height; None wher
     "plates": (None, "half_gap"),
     "rectangular": ("half_width", "half_height"),
 }
+_FREE = "its images shift the tunes of a ring; without a ring, forces across the motion are those of free space"
 _KEYS = ("radius", "half_width", "half_height", "half_gap")
 
 
 def surroundings(reading):
     """Surroundings that the reading describes; what could not be read has been said and is left out."""
+    for key in reading.written(_CHAMBER, "surroundings.poles"):
+        if "ring" not in reading:
+            reading.warn(key, _FREE)
     return Surroundings(
         chamber=_chamber(reading) if _CHAMBER in reading else None,
         pole_half_gap=reading.si("surroundings.poles.half_gap"),

@@ -4,10 +4,11 @@ import re
 
 from beamfield.describe.key import Key
 from beamfield.describe.words_beam import BEAM
+from beamfield.describe.words_company import COMPANY
 from beamfield.describe.words_machine import MACHINE
 from beamfield.describe.words_task import TASK
 
-KEYS = {key.path: key for key in (*TASK, *BEAM, *MACHINE)}
+KEYS = {key.path: key for key in (*TASK, *BEAM, *MACHINE, *COMPANY)}
 ROOT = Key("", "section", "A case: a bunch, what stands round it, and what is asked of it.")
 
 

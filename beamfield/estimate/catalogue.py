@@ -5,6 +5,7 @@ The one list that evaluation, limits, pages, `explain` and the README are made f
 
 from beamfield.estimate.catalogue_entry import QUESTIONS, Entry
 from beamfield.estimate.entries_bunch import BUNCH
+from beamfield.estimate.entries_company import COMPANY
 from beamfield.estimate.entries_domain import DOMAIN
 from beamfield.estimate.entries_effect import EFFECT
 from beamfield.estimate.entries_strength import STRENGTH
@@ -12,4 +13,4 @@ from beamfield.estimate.entries_walls import WALLS
 
 __all__ = ["CATALOGUE", "QUESTIONS", "Entry"]
 
-CATALOGUE = {entry.name: entry for entry in (*BUNCH, *STRENGTH, *EFFECT, *WALLS, *DOMAIN)}
+CATALOGUE = {entry.name: entry for entry in (*BUNCH, *STRENGTH, *EFFECT, *WALLS, *COMPANY, *DOMAIN)}

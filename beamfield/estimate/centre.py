@@ -36,6 +36,11 @@ def slopes(field, sigma, axes=(0, 1, 2)):
     return np.array([ratios[:, :count] @ slope_weights(count) for count in (len(STENCIL), len(STENCIL) - 1)])
 
 
+def odd(field):
+    """The odd part of a field about the centre, which alone has a slope there: for the field of other bunches."""
+    return lambda points: 0.5 * (field(points) - field(-points))
+
+
 def smooth_slopes(field, sigma, axes=(0, 1, 2)):
     """The same by least squares on both sides, for the noisy field of particles: the slope within 0.3 rms."""
     steps = np.concatenate([-STENCIL[::-1], STENCIL])

@@ -81,7 +81,7 @@ def _of_product(bunch, rule, probes, scales):
 
     shape, out = bunch.shape, np.empty((4, probes.shape[1]))
     kinds = (_CODES[shape.transverse], _CODES[shape.longitudinal])
-    azimuth = azimuth_nodes(probes, scales, rule.azimuth, shape.transverse != "gaussian")
+    azimuth = azimuth_nodes(probes, scales, rule.azimuth, shape.transverse != "gaussian", rule.window)
     nodes = (*azimuth, *unit_nodes(rule.radial), *height_nodes(rule))
     probe_charges.probe_field(probes, scales, kinds, rule.window, *nodes, bunch.gamma, out)
     return out

@@ -66,15 +66,21 @@ def unit_nodes(count):
 
 
 def height_nodes(rule):
-    """Nodes for the longer part of the heights, the pairs or what is left above or below them, and for the shorter."""
+    """Nodes for the longer part of the heights, the pairs or what is left above or below them, and for the shorter.
+
+    Without faces: for the pairs, and for what only one side has, most of a bunch seen from its tail.
+    """
     if not rule.faced:
-        return *unit_nodes(rule.height // 2), np.empty(0), np.empty(0)
+        return *unit_nodes(rule.height // 2), *unit_nodes(rule.height)
     few = min(rule.few, rule.height - 2)
     return *unit_nodes((rule.height - few) // 2), *unit_nodes(few)
 
 
-def azimuth_nodes(probes, scales, count, edged):
-    """Directions (M, 2, K), in units of the scales a and b, and weights (M, K) of the azimuth for probes (3, M)."""
+def azimuth_nodes(probes, scales, count, edged, window=6.5):
+    """Directions (M, 2, K), in units of the scales a and b, and weights (M, K) of the azimuth for probes (3, M).
+
+    window, rms sizes of a Gaussian that are kept.
+    """
     from beamfield.kernels.azimuths import azimuths
 
     a, b = scales[:2]
@@ -82,6 +88,6 @@ def azimuth_nodes(probes, scales, count, edged):
     flatness = max(a, b) / min(a, b)
     portion = 0.5 + (0.0 if scales[2] > LONG * sqrt(a * b) else 0.3 * log10(flatness))
     angles, weights = np.empty((len(x), count)), np.empty((len(x), count))
-    azimuths(x, y, 1.0 - flatness**-2, portion, edged, angles, weights)
+    azimuths(x, y, 1.0 - flatness**-2, portion, edged, window, angles, weights)
     directions = (np.cos(angles), np.sin(angles)) if a >= b else (np.sin(angles), np.cos(angles))
     return np.ascontiguousarray(np.stack(directions, axis=1)), weights

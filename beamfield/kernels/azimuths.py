@@ -13,6 +13,7 @@ from beamfield.kernels.compiled import compiled
 
 NEAREST = 1.0 - 1e-7  # squared scaled distance from the middle at which a probe counts as standing on an edge
 ON_EDGE = 1.0 - 1e-12  # scaled distance from which a probe counts as beside the edge, a rounding or two inside it too
+BESIDE = 5.0  # rms distance from the middle of a Gaussian from which only the directions that meet it count
 GATHER = 3.0  # squared rms distance from the middle of a Gaussian where directions to it start to crowd
 
 
@@ -48,28 +49,31 @@ def solved(wanted, guess, low, high, flat, share, crowd, centre, rest):
 
 
 @compiled(parallel=True)
-def azimuths(x, y, flat, portion, edged, angles, weights):
+def azimuths(x, y, flat, portion, edged, window, angles, weights):
     """Fill angles and weights (M, K) for probes at (x, y), in units of the scales of a section that is flat in y.
 
     flat is 1 - b^2/a^2; portion, the part of the directions that the section asks for, the rest following the edge
     that a probe stands next to, or looking to and from the middle of a Gaussian. Beside an edged bunch only the
-    directions that meet it count, crowded at the ends of their range, where the chord vanishes as a root.
+    directions that meet it count, crowded at the ends of their range, where the chord vanishes as a root. Beside a
+    Gaussian its window is met, in even steps: the charge fades towards the ends by itself.
     """
     count = angles.shape[1]
     quarter = elliptic(0.5 * math.pi, flat)
     for m in prange(len(x)):
         distance, outer = math.hypot(x[m], y[m]), math.atan2(y[m], x[m])
-        if edged and distance > ON_EDGE:
-            reach = math.asin(min(1.0, 1.0 / distance))
+        if distance > (ON_EDGE if edged else BESIDE):
+            reach = math.asin(min(1.0, (1.0 if edged else window) / distance))
             start, end = outer + math.pi - reach, outer + math.pi + reach
             first, last = elliptic(start, flat), elliptic(end, flat)
             guess = start
             for k in range(count):
-                turn = math.pi * ((k + 0.5) / count - 0.5)
-                wanted = 0.5 * (first + last) + 0.5 * (last - first) * math.sin(turn)
+                even = 2.0 * (k + 0.5) / count - 1.0
+                turn = 0.5 * math.pi * even
+                place, step = (math.sin(turn), 0.5 * math.pi * math.cos(turn)) if edged else (even, 1.0)
+                wanted = 0.5 * (first + last) + 0.5 * (last - first) * place
                 guess, slope = solved(wanted, guess, start - 1e-9, end + 1e-9, flat, 1.0, 0.0, 0.0, 0.0)
                 angles[m, k] = guess
-                weights[m, k] = 0.5 * (last - first) * math.cos(turn) * math.pi / count / slope
+                weights[m, k] = (last - first) * step / count / slope
         else:
             d2 = distance * distance
             crowd, centre = (min(d2, NEAREST), outer) if edged else (d2 / (GATHER + d2), outer + 0.5 * math.pi)

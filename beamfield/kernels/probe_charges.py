@@ -21,6 +21,7 @@ from beamfield.kernels.compiled import compiled
 from beamfield.kernels.moving_charge import one_charge
 
 GAUSSIAN, FLAT, PARABOLIC, COASTING = 0, 1, 2, 3
+PAIRED = 2.0  # rms lengths from the middle of a Gaussian up to which all heights are paired
 
 
 @compiled(inline="always")
@@ -69,11 +70,11 @@ def column(x, y, z, rho, weight, line, heights, gamma):
     else:
         inner, outer = math.asinh((top - abs(z)) / rho), math.asinh((top + abs(z)) / rho)
         side = -1.0 if z > 0.0 else 1.0
-        if along == GAUSSIAN:
+        if along == GAUSSIAN and abs(z) < PAIRED * c:
             inner = outer
     for part in range(2):
         low, high, signs = (0.0, inner, 2) if part == 0 else (abs(inner), outer, 1)
-        longer = (part == 0) == (inner >= 0.5 * outer)
+        longer = part == 0 if along == GAUSSIAN else (part == 0) == (inner >= 0.5 * outer)
         nodes, weights = (many, w_many) if longer else (few, w_few)
         if high <= low:
             continue

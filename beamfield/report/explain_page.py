@@ -10,6 +10,11 @@ NEEDS = {
     "emittance": "`bunch.emittance`",
     "walls": "a chamber or poles in `surroundings`",
     "density": "a shape, not a particle file",
+    "train": "`bunch.train`",
+    "encounter": "the section `other_bunch`",
+    "opposing": "an opposing bunch in `other_bunch`",
+    "aside": "`other_bunch.offset` in x or y",
+    "beta": "`other_bunch.beta` or `ring`",
 }
 
 

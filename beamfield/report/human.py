@@ -4,7 +4,7 @@ from dataclasses import dataclass
 from math import floor, isfinite, log10
 
 PREFIXES = {-15: "f", -12: "p", -9: "n", -6: "µ", -3: "m", 0: "", 3: "k", 6: "M", 9: "G", 12: "T"}
-PREFIXED = {"C", "A", "V", "V/m", "V/m2", "eV", "eV/c", "eV/m", "m", "rad/m", "T m", "ohm", "J", "s"}
+PREFIXED = {"C", "A", "V", "V/m", "V/m2", "eV", "eV/c", "eV/m", "m", "rad", "rad/m", "T m", "ohm", "J", "s"}
 LARGEST = {"m": 3}  # nobody says megametre
 MOST_DIGITS = 6
 ROUNDING = 1e-12  # relative: below it, what is printed is the value itself

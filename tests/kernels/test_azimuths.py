@@ -24,7 +24,7 @@ def test_weights_go_once_round(flat, edged):
     converged = 1e-5
     for count in range(28, 66, 2):
         angles, weights = np.empty((2, len(x), count))
-        azimuths(x, y, flat, 0.58, edged, angles, weights)
+        azimuths(x, y, flat, 0.58, edged, 6.5, angles, weights)
         assert np.abs(weights[:-1].sum(axis=1) / (2.0 * np.pi) - 1.0).max() < converged
         assert np.all(np.diff(angles, axis=1) > 0.0)
 
@@ -32,7 +32,7 @@ def test_weights_go_once_round(flat, edged):
 def test_beside_an_edge_only_what_meets_it():
     """Closed form: the sector of half width asin(1/d) about the way to the axis."""
     angles, weights = np.empty((2, 1, 64))
-    azimuths(np.array([2.0]), np.array([0.0]), 0.0, 0.5, True, angles, weights)
+    azimuths(np.array([2.0]), np.array([0.0]), 0.0, 0.5, True, 6.5, angles, weights)
     assert abs(angles - np.pi).max() < np.arcsin(0.5)
     midpoint_rule = 1e-3
     assert weights.sum() == pytest.approx(np.pi / 3.0, rel=midpoint_rule, abs=0.0)
