@@ -55,9 +55,7 @@ def self_field(case, points):
     """
     from beamfield.estimate import source, superposition
 
-    return source.self_field(
-        case.bunch, case.numerics, superposition.rows("points", points), case.surroundings.cathode
-    )
+    return source.self_field(case.bunch, case.numerics, superposition.rows("points", points), case.surroundings.cathode)
 
 
 def field_of_others(case, points):

@@ -20,7 +20,7 @@ def ellipse_image(w, h, source, place, modes=1500):
     return np.array([-slope.real, slope.imag])
 
 
-def rectangle_image(w, h, source, place, count=90, off=0.45):
+def rectangle_image(w, h, source, place, count=50, off=0.6):
     """The same in a rectangle, by `count` lines of charge a side of a wider one, fitted to no potential on the wall."""
     outer = _frame(w + off * h, h + off * h, count)
     wall = _frame(w, h, 3 * count)
