@@ -50,11 +50,12 @@ def evaluate(case, method=None):
 def self_field(case, points):
     """The bunch's own Field at points (3, M) [m] about its centre: E [V/m], B [T], doubt, closed_form (E or None).
 
-    Own alone: neither its train nor a bunch that it meets is in it.
+    Own alone: neither its train nor a bunch that it meets is in it, nor a chamber; before a cathode its mirror image
+    is.
     """
     from beamfield.estimate import source, superposition
 
-    return source.self_field(case.bunch, case.numerics, superposition.rows("points", points))
+    return source.self_field(case.bunch, case.numerics, superposition.rows("points", points), case.surroundings.cathode)
 
 
 def field_of_others(case, points):

@@ -9,6 +9,10 @@ _NEEDS = {  # what a result needs -> whether a bunch, in a ring or None and in i
     "ring": (lambda bunch, ring, near: ring is not None, "a ring; add the section 'ring' with circumference and tune"),
     "emittance": (lambda bunch, ring, near: bunch.emittance is not None, "emittances; add bunch.emittance"),
     "density": (lambda bunch, ring, near: bunch.shape is not None, "a density; this bunch is known as particles"),
+    "walls": (
+        lambda bunch, ring, near: near.chamber is not None or near.pole_half_gap is not None,
+        "walls; add surroundings.chamber or surroundings.poles",
+    ),
     "train": (
         lambda bunch, ring, near: near.train is not None and near.train.count > 1,
         "bunch.train, of two at least",
@@ -45,7 +49,7 @@ _NEEDS = {  # what a result needs -> whether a bunch, in a ring or None and in i
     ),
     "rf": (lambda bunch, ring, near: ring is None or ring.rf is not None, "cavities; add ring.rf"),
 }
-_GIVES = {"ring": "ring", "rf": "ring", "train": "bunch.train"} | dict.fromkeys(
+_GIVES = {"ring": "ring", "rf": "ring", "train": "bunch.train", "walls": "surroundings"} | dict.fromkeys(
     ("encounter", "opposing", "aside", "beta"), "other_bunch"
 )  # what is needed -> the section that says it
 

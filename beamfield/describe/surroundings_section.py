@@ -11,16 +11,15 @@ _SIZES = {  # shape -> the keys of half its width and half its height; None wher
     "plates": (None, "half_gap"),
     "rectangular": ("half_width", "half_height"),
 }
+_FREE = "its images shift the tunes of a ring; without a ring, forces across the motion are those of free space"
 _KEYS = ("radius", "half_width", "half_height", "half_gap")
-_ALONG_ONLY = (
-    "read and checked; its images along are in potential, geometry factor and what follows, those across in no result"
-)
-_NO_IMAGE = "read and checked; the images in it are not in the results of this version"
 
 
 def surroundings(reading):
     """Surroundings that the reading describes; what could not be read has been said and is left out."""
-    _warn_of_images(reading)
+    for key in reading.written(_CHAMBER, "surroundings.poles"):
+        if "ring" not in reading:
+            reading.warn(key, _FREE)
     return Surroundings(
         chamber=_chamber(reading) if _CHAMBER in reading else None,
         pole_half_gap=reading.si("surroundings.poles.half_gap"),
@@ -28,13 +27,6 @@ def surroundings(reading):
         neutralisation=reading.si("surroundings.neutralisation", absent=0.0) or 0.0,
         cathode_field=reading.si("surroundings.cathode.field"),
     )
-
-
-def _warn_of_images(reading):
-    for key in reading.written(_CHAMBER):
-        reading.warn(key, _ALONG_ONLY)
-    for key in reading.written("surroundings.poles", "surroundings.cathode"):
-        reading.warn(key, _NO_IMAGE)
 
 
 def _chamber(reading):

@@ -9,6 +9,7 @@ from beamfield.estimate.catalogue import CATALOGUE
 from beamfield.estimate.density_source import central_density
 from beamfield.estimate.encounter_force import encounter_force
 from beamfield.estimate.frame import frame
+from beamfield.estimate.image_shift import image_shift
 from beamfield.estimate.intensity_limit import intensity_limit
 from beamfield.estimate.longitudinal import longitudinal
 from beamfield.estimate.past_length import memory
@@ -20,7 +21,7 @@ from beamfield.estimate.tune_shift import tune_shift
 from beamfield.laws import intensity
 
 QUESTIONS = (
-    *(frame, self_force, space_charge_ratio, tune_shift, train_force, encounter_force, memory),
+    *(frame, self_force, space_charge_ratio, tune_shift, image_shift, train_force, encounter_force, memory),
     *(longitudinal, synchrotron_motion, intensity_limit),
 )
 ASTRAY = 1e-3  # of the density at the centre: a sum that misses it by more is not to be used
@@ -49,7 +50,8 @@ def checks(bunch, findings):
 
 
 def _kappas(findings):
-    return [findings[name] for name in ("defocusing_x", "defocusing_y", "defocusing_z") if name in findings]
+    """The slopes of the field: as strengths they are those of the bunch alone, without background."""
+    return [findings[name] for name in ("field_gradient_x", "field_gradient_y", "field_gradient_z") if name in findings]
 
 
 def _gauss(bunch, findings):
@@ -57,8 +59,8 @@ def _gauss(bunch, findings):
     kappas = _kappas(findings)
     bend = intensity.acceleration(1.0, bunch.species.charge, bunch.species.mass, bunch.beta_gamma)
     wanted = bend * central_density(bunch) * bunch.gamma / VACUUM_PERMITTIVITY
-    total, doubt = sum(k.value for k in kappas), float(np.linalg.norm([k.doubt for k in kappas]))
-    return abs(total / wanted - 1.0), doubt / wanted
+    total, doubt = bend * sum(k.value for k in kappas), bend * float(np.linalg.norm([k.doubt for k in kappas]))
+    return abs(total / wanted - 1.0), abs(doubt / wanted)
 
 
 def _astray(finding, off):

@@ -15,9 +15,9 @@ QUESTIONS = {
 class Entry:
     """name and unit of a result; question, a key of QUESTIONS; definition, one sentence; formula, plain text; domain,
     where the formula holds; source, author, title, year, equation; needs, the parts of a case without which it is
-    absent ("bunch", i.e. not coasting; "ring"; "emittance"; "density", i.e. not a particle file; "train";
-    "encounter", i.e. another bunch; "opposing", one that comes towards us; "aside", one whose centre passes beside
-    ours; "beta", where they meet)."""
+    absent ("bunch", i.e. not coasting; "ring"; "emittance"; "walls", i.e. chamber or poles; "density", i.e. not a
+    particle file; "train"; "encounter", i.e. another bunch; "opposing", one that comes towards us; "aside", one whose
+    centre passes beside ours; "beta", where they meet)."""
 
     name: str
     unit: str

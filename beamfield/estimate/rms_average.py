@@ -6,6 +6,7 @@ from math import pi
 
 import numpy as np
 
+from beamfield.estimate.background import left_across, weakened
 from beamfield.estimate.finding import Finding
 from beamfield.estimate.frame import line_density
 from beamfield.estimate.source import asked, source_of
@@ -13,6 +14,7 @@ from beamfield.laws import intensity, rms_force
 
 NODES, FEWER = 7, 6  # across, round and along an octant of the bunch; the fewer show the error of the mean
 SAMPLE = 4096  # particles whose forces are averaged
+NO_IMAGE = "the image in the cathode is not in this value"
 CHARGES = 8192  # a probe: the mean over the bunch is known to fewer digits than one field
 
 
@@ -27,7 +29,9 @@ def space_charge_ratio(bunch, surroundings, ring, numerics):
         values, doubts, method = _mean_forces(bunch, numerics)
     for axis, name in enumerate("xy"):
         textbook = None if closed is None else float(closed[axis])
-        yield Finding(f"space_charge_ratio_{name}", float(values[axis]), float(doubts[axis]), textbook, method)
+        image = (NO_IMAGE,) if surroundings.cathode else ()
+        free = Finding(f"space_charge_ratio_{name}", float(values[axis]), float(doubts[axis]), textbook, method, image)
+        yield weakened(free, *left_across(bunch, surroundings))
 
 
 def _mean_forces(bunch, numerics):

@@ -1,9 +1,12 @@
 """How strong is the field of the bunch, and what does it do to a particle in it?"""
 
+from dataclasses import replace
 from math import nan
 
 import numpy as np
 
+from beamfield.estimate.background import ACROSS_ONLY, ALONE, left_across, weakened
+from beamfield.estimate.cathode import force_weight, odd, remarks_of
 from beamfield.estimate.centre import MISSED, peak_place, slopes, smooth_slopes
 from beamfield.estimate.finding import Finding
 from beamfield.estimate.frame import line_density
@@ -13,37 +16,56 @@ from beamfield.laws import intensity
 
 AXES = "xyz"
 LONG = 10.0  # rest-frame aspect above which a bunch counts as long
-NEUTRALISED = "the neutralising background is not in this value"
 
 
 def axes_of(bunch):
     return (0, 1) if bunch.coasting else (0, 1, 2)
 
 
-def gradients(bunch, numerics):
-    """Slopes at the centre (A,), their doubts (A,), closed forms (A,) or None, and the method."""
-    closed, axes = closed_gradient(bunch), axes_of(bunch)
+def gradients(bunch, numerics, cathode=None, across=1.0):
+    """Slopes at the centre (A,), their doubts (A,), closed forms (A,) or None, and the method; with the image in a
+    cathode, if there is one.
+    """
+    closed, axes = closed_gradient(bunch) if cathode is None else None, axes_of(bunch)
     if numerics.method == "closed-form" and closed is not None:
         closed = closed[list(axes)]
         return closed, 1e-9 * abs(closed), closed, "closed form"
-    source = source_of(bunch, numerics)
+    source = source_of(bunch, numerics, cathode, across)
     sigma = np.where(np.isfinite(bunch.sigma), bunch.sigma, 1.0)
     law = slopes if bunch.macro is None else smooth_slopes
-    (value, other), (doubt, _) = asked(source, lambda field: law(field, sigma, axes))
-    return value, np.hypot(doubt, other - value), None if closed is None else closed[list(axes)], source.method
+    seen = odd if cathode is not None and bunch.macro is None else lambda field: field
+    (value, other), (doubt, _) = asked(source, lambda field: law(seen(field), sigma, axes))
+    closed = None if closed is None else closed[list(axes)]
+    return value, np.hypot(doubt, other - value), closed, source.method
 
 
 def self_force(bunch, surroundings, ring, numerics):
     """Findings on the strength of the field and on the forces it exerts."""
     yield _perveance(bunch, surroundings)
-    remarks = (NEUTRALISED,) if surroundings.neutralisation else ()
-    found = gradients(bunch, numerics)
-    yield from _findings("field_gradient", found, 1.0, remarks)
-    kappas = tuple(part * _bend(bunch) if isinstance(part, np.ndarray) else part for part in found)
-    yield from _findings("defocusing", kappas, 1.0, remarks)
-    yield _plasma(kappas, remarks)
+    cathode, image = surroundings.cathode, remarks_of(surroundings)
+    alone = (*image, *((ALONE,) if surroundings.neutralisation else ()))
+    found = gradients(bunch, numerics, cathode)
+    yield from _findings("field_gradient", found, 1.0, alone)
+    force = found if cathode is None else gradients(bunch, numerics, cathode, force_weight(bunch))
+    yield from _defocusing(bunch, surroundings, _scaled(force, _bend(bunch)))
+    yield _plasma(_scaled(found, _bend(bunch)), alone)
     for axis in axes_of(bunch):
-        yield from _peaks(bunch, numerics, axis, remarks)
+        yield from _peaks(bunch, numerics, axis, surroundings, alone)
+
+
+def _scaled(found, factor):
+    return tuple(part * factor if isinstance(part, np.ndarray) else part for part in found)
+
+
+def _defocusing(bunch, surroundings, kappas):
+    """Across, the background takes its part of the force of the bunch; along, it has none."""
+    factor, told, valid = left_across(bunch, surroundings)
+    image, along = remarks_of(surroundings), (ACROSS_ONLY,) if told else ()
+    for axis, finding in enumerate(_findings("defocusing", kappas, 1.0, image)):
+        if axis == 2:
+            yield replace(finding, remarks=(*image, *along))
+        else:
+            yield weakened(finding, factor, told, valid)
 
 
 def _bend(bunch):
@@ -83,11 +105,12 @@ def _three(values):
     return (*values, 0.0) if len(values) == 2 else tuple(values)
 
 
-def _peaks(bunch, numerics, axis, remarks):
+def _peaks(bunch, numerics, axis, surroundings, remarks):
+    cathode = surroundings.cathode
     edge = bunch.extent(axis)
     cusp = bunch.shape is not None and bunch.shape.flat(axis)
     closed_peak = None
-    if bunch.shape is not None:
+    if bunch.shape is not None and cathode is None:
         place = (
             peak_place(lambda places: _closed(bunch, axis, places), bunch.sigma[axis], edge, cusp)
             if _has(bunch, axis)
@@ -97,7 +120,7 @@ def _peaks(bunch, numerics, axis, remarks):
     if numerics.method == "closed-form" and closed_peak is not None:
         value, doubt, method = closed_peak, 1e-9 * closed_peak, "closed form"
     else:
-        source = source_of(bunch, numerics)
+        source = source_of(bunch, numerics, cathode)
         place = peak_place(lambda places: _along(source.fields[0], axis, places), bunch.sigma[axis], edge, cusp)
         value, doubt = asked(source, lambda field: float(abs(_along(field, axis, np.array([place]))[0])))
         doubt, method = np.hypot(doubt, MISSED * value), source.method
@@ -105,8 +128,14 @@ def _peaks(bunch, numerics, axis, remarks):
     yield Finding(f"peak_field_{AXES[axis]}", value, float(doubt), closed_peak, method, remarks)
     if axis < 2:
         closed_kick = None if closed_peak is None else bend * closed_peak
-        yield Finding(f"peak_kick_{AXES[axis]}", bend * value, bend * float(doubt), closed_kick, method, remarks)
+        if cathode is not None:
+            force = source_of(bunch, numerics, cathode, force_weight(bunch))
+            value, doubt = asked(force, lambda field: float(abs(_along(field, axis, np.array([place]))[0])))
+        kick = Finding(f"peak_kick_{AXES[axis]}", bend * value, bend * float(doubt), closed_kick, method)
+        factor, told, valid = left_across(bunch, surroundings)
+        yield weakened(replace(kick, remarks=remarks_of(surroundings)), abs(factor), told, valid)
     else:
+        remarks = (*remarks_of(surroundings), *((ACROSS_ONLY,) if surroundings.neutralisation else ()))
         work = intensity.energy_change(1.0, bunch.species.charge)
         closed_work = None if closed_peak is None else work * closed_peak
         yield Finding("peak_energy_change_z", work * value, work * float(doubt), closed_work, method, remarks)

@@ -4,6 +4,7 @@ from dataclasses import replace
 
 import numpy as np
 
+from beamfield.estimate.background import left_across, weakened
 from beamfield.estimate.finding import Finding
 from beamfield.estimate.self_force import gradients
 from beamfield.laws import intensity
@@ -20,16 +21,20 @@ def tune_shift(bunch, surroundings, ring, numerics):
     *columns, method = focusing_round_the_ring(bunch, ring, numerics)
     for axis, name in enumerate("xy"):
         shifts = [_shift(ring, axis, kappa) for kappa in columns]
-        yield _finding(f"tune_shift_{name}", shifts, method, ring.tune[axis], surroundings)
+        free = _finding(f"tune_shift_{name}", shifts, method)
+        yield _small(weakened(free, *left_across(bunch, surroundings)), ring.tune[axis])
 
 
-def _finding(name, shifts, method, tune, surroundings):
+def _finding(name, shifts, method):
     value, varied, closed = shifts
-    remarks = ("the neutralising background is not in this value",) if surroundings.neutralisation else ()
-    small = abs(value) <= GREAT * tune
-    if not small:
-        remarks += (f"more than {GREAT:.0%} of the tune: first order in the shift no longer holds",)
-    return Finding(name, value, abs(varied - value), closed, method, remarks, small)
+    return Finding(name, value, abs(varied - value), closed, method)
+
+
+def _small(finding, tune):
+    if abs(finding.value) <= GREAT * tune:
+        return finding
+    remark = f"more than {GREAT:.0%} of the tune: first order in the shift no longer holds"
+    return replace(finding, remarks=(*finding.remarks, remark), valid=False)
 
 
 def local_sizes(bunch, optics):

@@ -43,7 +43,16 @@ def perveance(current, beta_gamma, characteristic_current, neutralisation=0.0):
     Control 5, 146, 1958 (its abstract read); from memory of M. Reiser, Theory and Design of Charged Particle Beams,
     1994.
     """
-    return 2.0 * current / (characteristic_current * beta_gamma**3) * (1.0 - (1.0 + beta_gamma**2) * neutralisation)
+    return 2.0 * current / (characteristic_current * beta_gamma**3) * neutralised(beta_gamma, neutralisation)
+
+
+def neutralised(beta_gamma, neutralisation):
+    """Part of the force across that a background at rest leaves [1]: 1 - gamma^2 f, nought at f = 1/gamma^2.
+
+    The bunch's own force is q E / gamma^2; the background, with f of its charge and of the same section, takes q f E.
+    Source and domain: as for perveance.
+    """
+    return 1.0 - (1.0 + beta_gamma**2) * neutralisation
 
 
 def acceleration(field, charge, mass, beta_gamma):

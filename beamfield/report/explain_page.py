@@ -8,6 +8,7 @@ NEEDS = {
     "bunch": "a bunch, not a coasting beam",
     "ring": "the section `ring`",
     "emittance": "`bunch.emittance`",
+    "walls": "a chamber or poles in `surroundings`",
     "density": "a shape, not a particle file",
     "train": "`bunch.train`",
     "encounter": "the section `other_bunch`",
