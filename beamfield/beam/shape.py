@@ -60,6 +60,10 @@ class Shape:
         """Half the edge-to-edge extent over the rms size along axis 0, 1, 2; None without an edge."""
         return self._widths(axis)[0]
 
+    def flat(self, axis):
+        """Whether the density is constant up to an edge along an axis through the centre."""
+        return (self.longitudinal if axis == 2 else self.transverse) in ("kv", "uniform")
+
     def fwhm(self, axis):
         """Full width at half maximum of the projected profile over the rms size; None where it has no meaning."""
         return self._widths(axis)[1]

@@ -3,7 +3,7 @@
 _CHAMBER, _CATHODE, _DISPERSION = "surroundings.chamber", "surroundings.cathode.at", "ring.optics.dispersion_x"
 _TAIL_ACROSS = 3.0  # rms sizes that must fit where a bunch has no edge
 _TAIL_ALONG = 2.0
-_FLATTEST = 1e4  # width over height, or the reverse
+_FLATTEST = 1e3  # width over height, or the reverse
 _ROUNDED = 1e-3  # a full ring may be described by rounded numbers
 _SAME_MOMENTUM = 0.01  # relative difference that may be rounding, or a spread
 

@@ -89,8 +89,10 @@ def _of_product(bunch, rule, probes, scales):
 
 def _of_ellipsoid(bunch, rule, probes, scales):
     """Rays in pairs from inside; from outside slopes first, but azimuths first where the bunch is a thin pancake."""
+    from beamfield.kernels import probe_rays
+
     degree, out = (2 if bunch.shape.transverse == "parabolic" else 0), np.empty((4, probes.shape[1]))
-    outside = np.square(probes / np.array(scales)[:, None]).sum(axis=0) > 1.0
+    outside = np.square(probes / np.array(scales)[:, None]).sum(axis=0) > probe_rays.ON_SURFACE
     seen = _from_cone if bunch.aspect > PANCAKE else partial(_on_rays, paired=rule.height // 4)
     for chosen, way in ((~outside, partial(_on_rays, paired=rule.height // 2)), (outside, seen)):
         part = np.ascontiguousarray(probes[:, chosen])

@@ -12,13 +12,15 @@ LONG = 3.0  # rest-frame aspect from which a flat section needs fewer directions
 @dataclass(frozen=True, slots=True)
 class Rule:
     """Charges in azimuth, distance and height round a probe; `faced` when the density ends on a face along z;
-    `window`, rms lengths of a Gaussian that are kept: beyond 6.5 lies less than 1e-9 of it."""
+    `window`, rms lengths of a Gaussian that are kept: beyond 6.5 lies less than 1e-9 of it; `few`, heights of a faced
+    density on the shorter part."""
 
     azimuth: int
     radial: int
     height: int
     faced: bool
     window: float = 6.5
+    few: int = 0
 
     @property
     def charges(self):
@@ -27,7 +29,8 @@ class Rule:
     def thinned(self, part):
         """The same rule with `part` of the nodes in each direction and half an rms length less of a Gaussian."""
         radial = self.radial if self.radial == 2 else max(4, round(part * self.radial))
-        return Rule(even(part * self.azimuth), radial, even(part * self.height), self.faced, self.window - 0.5)
+        height, window = even(part * self.height), self.window - 0.5
+        return Rule(even(part * self.azimuth), radial, height, self.faced, window, self.few - 1)
 
 
 def even(number):
@@ -46,7 +49,7 @@ def rule_for(aspect, section, charges, faced):
     slenderness = min(1.45, max(0.33, 0.8 * aspect**-0.2))
     radial = max(4, round(sqrt(slenderness * charges / azimuth)))
     height = max(4, int(charges / azimuth / radial) // 2 * 2)
-    return Rule(azimuth, radial, height, faced)
+    return Rule(azimuth, radial, height, faced, few=max(6, height // 5))
 
 
 def ray_rule(charges):
@@ -69,7 +72,7 @@ def height_nodes(rule):
     """
     if not rule.faced:
         return *unit_nodes(rule.height // 2), *unit_nodes(rule.height)
-    few = min(max(6, rule.height // 5), rule.height - 2)
+    few = min(rule.few, rule.height - 2)
     return *unit_nodes((rule.height - few) // 2), *unit_nodes(few)
 
 

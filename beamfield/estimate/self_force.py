@@ -1,8 +1,10 @@
 """How strong is the field of the bunch, and what does it do to a particle in it?"""
 
+from math import nan
+
 import numpy as np
 
-from beamfield.estimate.centre import peak_place, slopes, smooth_slopes
+from beamfield.estimate.centre import MISSED, peak_place, slopes, smooth_slopes
 from beamfield.estimate.finding import Finding
 from beamfield.estimate.frame import line_density
 from beamfield.estimate.source import asked, source_of
@@ -25,10 +27,11 @@ def gradients(bunch, numerics):
         closed = closed[list(axes)]
         return closed, 1e-9 * abs(closed), closed, "closed form"
     source = source_of(bunch, numerics)
-    law = slopes if bunch.macro is None else smooth_slopes
     sigma = np.where(np.isfinite(bunch.sigma), bunch.sigma, 1.0)
-    value, doubt = asked(source, lambda field: law(field, sigma, axes))
-    return value, doubt, None if closed is None else closed[list(axes)], source.method
+    if bunch.macro is not None:
+        return *asked(source, lambda field: smooth_slopes(field, sigma, axes)), None, source.method
+    (value, fewer), (doubt, _) = asked(source, lambda field: slopes(field, sigma, axes))
+    return value, np.hypot(doubt, fewer - value), closed[list(axes)], source.method
 
 
 def self_force(bunch, surroundings, ring, numerics):
@@ -68,6 +71,9 @@ def _findings(family, found, factor, remarks):
 
 def _plasma(kappas, remarks):
     values, doubts, closed, method = kappas
+    if not sum(values) > 0.0:
+        remark = "the strengths, as summed, do not add up to a defocusing one"
+        return Finding("plasma_wavelength", nan, nan, None, method, (*remarks, remark), False)
     value = intensity.plasma_wavelength(*_three(values))
     doubt = 0.5 * value * float(np.linalg.norm(doubts)) / float(np.sum(values))
     textbook = None if closed is None else float(intensity.plasma_wavelength(*_three(closed)))
@@ -80,10 +86,11 @@ def _three(values):
 
 def _peaks(bunch, numerics, axis, remarks):
     edge = bunch.extent(axis)
+    cusp = bunch.shape is not None and bunch.shape.flat(axis)
     closed_peak = None
     if bunch.shape is not None:
         place = (
-            peak_place(lambda places: _closed(bunch, axis, places), bunch.sigma[axis], edge)
+            peak_place(lambda places: _closed(bunch, axis, places), bunch.sigma[axis], edge, cusp)
             if _has(bunch, axis)
             else None
         )
@@ -92,9 +99,9 @@ def _peaks(bunch, numerics, axis, remarks):
         value, doubt, method = closed_peak, 1e-9 * closed_peak, "closed form"
     else:
         source = source_of(bunch, numerics)
-        place = peak_place(lambda places: _along(source.fields[0], axis, places), bunch.sigma[axis], edge)
+        place = peak_place(lambda places: _along(source.fields[0], axis, places), bunch.sigma[axis], edge, cusp)
         value, doubt = asked(source, lambda field: float(abs(_along(field, axis, np.array([place]))[0])))
-        method = source.method
+        doubt, method = np.hypot(doubt, MISSED * value), source.method
     bend = abs(_bend(bunch))
     yield Finding(f"peak_field_{AXES[axis]}", value, float(doubt), closed_peak, method, remarks)
     if axis < 2:

@@ -12,6 +12,7 @@ from numba import prange
 from beamfield.kernels.compiled import compiled
 
 NEAREST = 1.0 - 1e-7  # squared scaled distance from the middle at which a probe counts as standing on an edge
+ON_EDGE = 1.0 - 1e-12  # scaled distance from which a probe counts as beside the edge, a rounding or two inside it too
 BESIDE = 5.0  # rms distance from the middle of a Gaussian from which only the directions that meet it count
 GATHER = 3.0  # squared rms distance from the middle of a Gaussian where directions to it start to crowd
 
@@ -60,7 +61,7 @@ def azimuths(x, y, flat, portion, edged, window, angles, weights):
     quarter = elliptic(0.5 * math.pi, flat)
     for m in prange(len(x)):
         distance, outer = math.hypot(x[m], y[m]), math.atan2(y[m], x[m])
-        if distance > (1.0 if edged else BESIDE):
+        if distance > (ON_EDGE if edged else BESIDE):
             reach = math.asin(min(1.0, (1.0 if edged else window) / distance))
             start, end = outer + math.pi - reach, outer + math.pi + reach
             first, last = elliptic(start, flat), elliptic(end, flat)

@@ -16,6 +16,7 @@ import math
 
 from numba import prange
 
+from beamfield.kernels.azimuths import ON_EDGE
 from beamfield.kernels.compiled import compiled
 from beamfield.kernels.moving_charge import one_charge
 
@@ -111,7 +112,7 @@ def probe_field(
     for m in prange(probes.shape[1]):
         px, py, z = probes[0, m] / a, probes[1, m] / b, probes[2, m]
         d2 = px * px + py * py
-        inside = d2 < edge2
+        inside = d2 < (edge2 if across == GAUSSIAN else ON_EDGE**2)
         pancake = c * c < a * b
         line = (c, c * (window if along == GAUSSIAN else 1.0), along, 2.0 * window)
         near = max(abs(c - abs(z)), 0.15 * c) if along == FLAT else c

@@ -14,6 +14,7 @@ from beamfield.kernels.compiled import compiled
 from beamfield.kernels.moving_charge import one_charge
 
 LEFT, RIGHT = 0.5 - 0.5 / math.sqrt(3.0), 0.5 + 0.5 / math.sqrt(3.0)  # two Gauss nodes of (0, 1)
+ON_SURFACE = 1.0 + 1e-12  # squared scaled distance up to which a probe counts as inside: a rounding or two
 STEEPEST = 16.0  # eta beyond the steepest diagonal of the ellipsoid, where e^-2 eta has nothing left to add
 
 
@@ -70,7 +71,7 @@ def ray_field(probes, scales, degree, azimuth, w_azimuth, paired, w_paired, sing
     for m in prange(probes.shape[1]):
         p = (probes[0, m] / a, probes[1, m] / b, probes[2, m] / c)
         d2, height = p[0] * p[0] + p[1] * p[1], abs(p[2])
-        inside = d2 + height * height <= 1.0
+        inside = d2 + height * height <= ON_SURFACE
         down = -1.0 if p[2] >= 0.0 else 1.0
         ex = ey = ez = phi = 0.0
         for i in range(azimuth.shape[2]):

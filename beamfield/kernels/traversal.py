@@ -114,7 +114,11 @@ def walk_task(target, source, tables, rules, task, field):
     begin = np.zeros(depth + 1, np.int64)  # where the open cells of each level begin
     begin[1] = 1
     opened = np.zeros(256, np.int64)
-    stack, near, apart = np.zeros(source.tree.level.shape[0] + 2, np.int64), np.zeros(BUFFER, np.int64), np.zeros(BUFFER, np.int64)
+    stack, near, apart = (
+        np.zeros(source.tree.level.shape[0] + 2, np.int64),
+        np.zeros(BUFFER, np.int64),
+        np.zeros(BUFFER, np.int64),
+    )
     path = path_to(target.tree.parent, task)
     todo, level = np.zeros(2 * depth, np.int64), np.zeros(2 * depth, np.int64)
     count = 1
@@ -266,6 +270,4 @@ def nearest2(places, low, high, sheet):
 def add_apart(target, source, tables, rules, low, high, cells, count, work, field):
     for i in range(count):
         b = cells[i]
-        field_of_cell(
-            work, tables, source.sheets[b], source.moments[b], target.places, low, high, rules.cloud2, field
-        )
+        field_of_cell(work, tables, source.sheets[b], source.moments[b], target.places, low, high, rules.cloud2, field)

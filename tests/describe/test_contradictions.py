@@ -210,6 +210,6 @@ def test_faults_of_a_named_file_keep_their_place(tmp_path):
 def test_no_beam_is_a_sheet():
     line = fault(("x: 6.1 mm rms", "x: 6.1 nm rms"))
     assert line == (
-        f"{FILE}:7:9: bunch.size: one of x and y is 8.03e+05 times the other; at most 10000, far flatter than any beam"
+        f"{FILE}:7:9: bunch.size: one of x and y is 8.03e+05 times the other; at most 1000, far flatter than any beam"
     )
-    assert case(("y: 4.9 mm rms", "y: 0.7 um rms"))
+    assert case(("y: 4.9 mm rms", "y: 6.2 um rms"))

@@ -86,7 +86,7 @@ CASE = _object(
         },
         "limits": {
             "type": "array",
-            "items": _object({"limit": _TEXT, "value": {"type": "number"}, "met": {"type": "boolean"}}),
+            "items": _object({"limit": _TEXT, "value": {"type": ["number", "null"]}, "met": {"type": "boolean"}}),
         },
         "met": {"type": "boolean"},
         "warnings": _LINES,
