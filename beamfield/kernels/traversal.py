@@ -19,6 +19,7 @@ from typing import NamedTuple
 import numpy as np
 from numba import get_num_threads
 
+from beamfield.kernels.cells import longer
 from beamfield.kernels.compiled import compiled, inner
 from beamfield.kernels.expansion import STEP
 from beamfield.kernels.extent import COUNT, RADIUS, SIZE, STRENGTH, power
@@ -34,7 +35,6 @@ from beamfield.kernels.local_field import (
     take_place,
 )
 from beamfield.kernels.near_field import BLOCK, add_near
-from beamfield.kernels.tree import longer
 
 TOUCH = 1.2  # radii of two far cells together, at most, over their distance
 LARGE = 2.0  # ratio of the sizes of two cells of which one is large beside the other
@@ -114,11 +114,7 @@ def walk_task(target, source, tables, rules, task, field):
     begin = np.zeros(depth + 1, np.int64)  # where the open cells of each level begin
     begin[1] = 1
     opened = np.zeros(256, np.int64)
-    stack, near, apart = (
-        np.zeros(source.tree.level.shape[0] + 2, np.int64),
-        np.zeros(BUFFER, np.int64),
-        np.zeros(BUFFER, np.int64),
-    )
+    stack, near, apart = np.zeros(source.tree.level.shape[0] + 2, np.int64), np.zeros(BUFFER, np.int64), np.zeros(BUFFER, np.int64)
     path = path_to(target.tree.parent, task)
     todo, level = np.zeros(2 * depth, np.int64), np.zeros(2 * depth, np.int64)
     count = 1
@@ -270,4 +266,6 @@ def nearest2(places, low, high, sheet):
 def add_apart(target, source, tables, rules, low, high, cells, count, work, field):
     for i in range(count):
         b = cells[i]
-        field_of_cell(work, tables, source.sheets[b], source.moments[b], target.places, low, high, rules.cloud2, field)
+        field_of_cell(
+            work, tables, source.sheets[b], source.moments[b], target.places, low, high, rules.cloud2, field
+        )
