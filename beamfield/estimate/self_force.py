@@ -28,10 +28,9 @@ def gradients(bunch, numerics):
         return closed, 1e-9 * abs(closed), closed, "closed form"
     source = source_of(bunch, numerics)
     sigma = np.where(np.isfinite(bunch.sigma), bunch.sigma, 1.0)
-    if bunch.macro is not None:
-        return *asked(source, lambda field: smooth_slopes(field, sigma, axes)), None, source.method
-    (value, fewer), (doubt, _) = asked(source, lambda field: slopes(field, sigma, axes))
-    return value, np.hypot(doubt, fewer - value), closed[list(axes)], source.method
+    law = slopes if bunch.macro is None else smooth_slopes
+    (value, other), (doubt, _) = asked(source, lambda field: law(field, sigma, axes))
+    return value, np.hypot(doubt, other - value), None if closed is None else closed[list(axes)], source.method
 
 
 def self_force(bunch, surroundings, ring, numerics):

@@ -31,5 +31,7 @@ def self_field(bunch, numerics, points):
     field, doubt = asked(source, lambda lab: lab(points))
     total = np.square(field).sum()
     relative = float(np.sqrt(np.square(doubt).sum() / total)) if total > 0.0 else 0.0
-    magnetic = bunch.beta / SPEED_OF_LIGHT * np.stack([-field[1], field[0], np.zeros(field.shape[1])])
+    magnetic = source.magnetic(points) if bunch.macro is not None else None
+    if magnetic is None:
+        magnetic = bunch.beta / SPEED_OF_LIGHT * np.stack([-field[1], field[0], np.zeros(field.shape[1])])
     return Field(field, magnetic, relative, closed_field(bunch, points), source.method)
