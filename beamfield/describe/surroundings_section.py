@@ -12,6 +12,9 @@ _SIZES = {  # shape -> the keys of half its width and half its height; None wher
     "rectangular": ("half_width", "half_height"),
 }
 _KEYS = ("radius", "half_width", "half_height", "half_gap")
+_ALONG_ONLY = (
+    "read and checked; its images along are in potential, geometry factor and what follows, those across in no result"
+)
 _NO_IMAGE = "read and checked; the images in it are not in the results of this version"
 
 
@@ -23,12 +26,13 @@ def surroundings(reading):
         pole_half_gap=reading.si("surroundings.poles.half_gap"),
         cathode=reading.si("surroundings.cathode.at"),
         neutralisation=reading.si("surroundings.neutralisation", absent=0.0) or 0.0,
+        cathode_field=reading.si("surroundings.cathode.field"),
     )
 
 
 def _warn_of_images(reading):
     for key in reading.written(_CHAMBER):
-        reading.warn(key, f"{_NO_IMAGE}: it is only checked that the beam fits")
+        reading.warn(key, _ALONG_ONLY)
     for key in reading.written("surroundings.poles", "surroundings.cathode"):
         reading.warn(key, _NO_IMAGE)
 
