@@ -36,9 +36,9 @@ def slopes(field, sigma, axes=(0, 1, 2)):
     return np.array([ratios[:, :count] @ slope_weights(count) for count in (len(STENCIL), len(STENCIL) - 1)])
 
 
-def odd(field):
-    """The odd part of a field about the centre, which alone has a slope there: for the field of other bunches."""
-    return lambda points: 0.5 * (field(points) - field(-points))
+def slopes_amid(field, sigma, axes=(0, 1, 2)):
+    """dE_i/dx_i (A,) at the centre of any smooth field, that of other bunches: only its odd part has a slope there."""
+    return slopes(lambda points: 0.5 * (field(points) - field(-points)), sigma, axes)[0]
 
 
 def smooth_slopes(field, sigma, axes=(0, 1, 2)):

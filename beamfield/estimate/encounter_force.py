@@ -2,7 +2,7 @@
 
 import numpy as np
 
-from beamfield.estimate.centre import odd, slopes
+from beamfield.estimate.centre import slopes_amid
 from beamfield.estimate.companions import closed_law, met
 from beamfield.estimate.finding import Finding
 from beamfield.estimate.passage import FEWER, closed_strengths, passage_strengths
@@ -28,7 +28,7 @@ def _now(bunch, encounter, numerics):
     weakened = force_over_electric(bunch.beta_gamma, companion.momentum)
 
     def gradient(field):
-        return weakened * slopes(odd(lambda points: companion.electric(field, points)), other.sigma, (0, 1))[0]
+        return weakened * slopes_amid(lambda points: companion.electric(field, points), other.sigma, (0, 1))
 
     source, law = source_of(other, numerics), closed_law(other)
     closed = None if law is None else gradient(law)

@@ -6,7 +6,7 @@ from math import hypot, sqrt
 import numpy as np
 
 from beamfield.constants import COULOMB
-from beamfield.estimate.centre import odd, slopes
+from beamfield.estimate.centre import slopes_amid
 from beamfield.estimate.probe_rule import unit_nodes
 from beamfield.laws import flat_beam
 
@@ -81,4 +81,4 @@ def _flat(field):
 
 
 def _strengths(field, sigma):
-    return np.concatenate([field(np.zeros((3, 1)))[:2, 0], slopes(odd(field), sigma, (0, 1))[0]])
+    return np.concatenate([field(np.zeros((3, 1)))[:2, 0], slopes_amid(field, sigma, (0, 1))])

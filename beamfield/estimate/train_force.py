@@ -4,7 +4,7 @@ from dataclasses import replace
 
 import numpy as np
 
-from beamfield.estimate.centre import odd, slopes, smooth_slopes
+from beamfield.estimate.centre import slopes_amid
 from beamfield.estimate.companions import closed_law, neighbours, sum_over
 from beamfield.estimate.finding import Finding
 from beamfield.laws import intensity
@@ -34,8 +34,7 @@ def train_force(bunch, surroundings, ring, numerics):
 
 def _strengths(bunch, companion, field):
     """E_z [V/m] and the three kappas [1/m2] of one neighbour at the centre, (4,)."""
-    law = slopes if bunch.macro is None else smooth_slopes
-    gradient = law(odd(lambda points: companion.electric(field, points)), bunch.sigma)
+    gradient = slopes_amid(lambda points: companion.electric(field, points), bunch.sigma)
     bend = intensity.acceleration(1.0, bunch.species.charge, bunch.species.mass, bunch.beta_gamma)
     across = bend * bunch.gamma**2 * force_over_electric(bunch.beta_gamma, companion.momentum)
     return np.append(companion.electric(field, CENTRE)[2], gradient * np.array([across, across, bend]))

@@ -1,10 +1,13 @@
 """Trains: the field of the neighbours against sums of moving charges and closed forms."""
 
+from dataclasses import replace
+
 import numpy as np
 import pytest
 
 from beamfield.beam.encounter import Encounter
 from beamfield.beam.numerics import Numerics
+from beamfield.beam.particles import MacroParticles
 from beamfield.beam.surroundings import Chamber, Surroundings
 from beamfield.beam.train import Train
 from beamfield.constants import COULOMB, SPEED_OF_LIGHT
@@ -117,6 +120,20 @@ def test_own_and_others_are_the_whole():
     own, others = self_field(bunch, COARSE, points), field_of_others(bunch, near, COARSE, points)
     assert np.allclose(own.E, others.E, rtol=1e-12)
     assert np.allclose(own.B, others.B, rtol=1e-12, atol=1e-12 * np.abs(own.E).max() / SPEED_OF_LIGHT)
+
+
+def test_a_train_of_particles():
+    """Closed form: the same train of Gaussian bunches; seen from outside, a sample of 20000 is smooth."""
+    bunch = made("gaussian", 1.0)
+    unit = np.random.default_rng(3).normal(size=(3, 10000))
+    positions = np.concatenate([unit, -unit], axis=1) * np.array(bunch.sigma)[:, None]
+    sampled = replace(bunch, shape=None, macro=MacroParticles(positions, np.full(20000, 5e-5)))
+    train = Train(3, 10.0 * bunch.sigma[2], place=1)
+    mine, theirs = found(sampled, train), found(bunch, train)
+    good = 0.01
+    for name, finding in mine.items():
+        assert finding.closed_form is None
+        assert finding.value == pytest.approx(theirs[name].value, rel=good)
 
 
 def test_walls_screen_distant_neighbours():
