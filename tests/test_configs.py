@@ -85,8 +85,9 @@ def test_self_checks_pass_and_limits_have_room_but_not_too_much(path):
 
 
 @all_of_them
-def test_only_perveance_may_be_out_of_its_domain(path):
-    assert {found.name for found in outcome(path).findings.values() if not found.valid} <= {"perveance"}
+def test_only_formulas_of_long_beams_may_be_out_of_their_domain(path):
+    of_long_beams = {"perveance", "geometry_factor", "limiting_current"}
+    assert {found.name for found in outcome(path).findings.values() if not found.valid} <= of_long_beams
 
 
 def test_json_keeps_the_promised_form(capsys):

@@ -5,6 +5,7 @@ from math import pi
 
 import numpy as np
 
+from beamfield.beam.rf import Rf
 from beamfield.errors import NonsenseError
 
 
@@ -32,20 +33,21 @@ class Optics:
 
 @dataclass(frozen=True, slots=True, eq=False)
 class Ring:
-    """circumference [m], tunes (x, y), equal bunches in it, optics."""
+    """circumference [m], tunes (x, y), equal bunches in it, optics; rf, None where nobody said."""
 
     circumference: float
     tune: tuple[float, float]
     bunches: int
     optics: Optics
+    rf: Rf | None = None
 
     def __post_init__(self):
         if not self.circumference > 0.0 or not all(q > 0.0 for q in self.tune) or self.bunches < 1:
             raise NonsenseError("a ring has a length, two tunes above zero and at least one bunch")
 
     @classmethod
-    def smooth(cls, circumference, tune, bunches=1):
+    def smooth(cls, circumference, tune, bunches=1, rf=None):
         """Ring of constant beta = R / Q."""
         radius = circumference / (2.0 * pi)
         optics = Optics.mean(radius / tune[0], radius / tune[1], source="smooth: beta = R/Q")
-        return cls(circumference, tuple(tune), bunches, optics)
+        return cls(circumference, tuple(tune), bunches, optics, rf)

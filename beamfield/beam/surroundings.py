@@ -25,8 +25,8 @@ class Chamber:
 
 @dataclass(frozen=True, slots=True)
 class Surroundings:
-    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m]; neutralisation, fraction of its
-    charge; train, the bunches before and behind; encounter, another bunch.
+    """chamber; pole_half_gap [m]; cathode, distance behind the bunch centre [m], and cathode_field at its surface
+    [V/m]; neutralisation, fraction of its charge; train, the bunches before and behind; encounter, another bunch.
     """
 
     chamber: Chamber | None = None
@@ -35,3 +35,4 @@ class Surroundings:
     neutralisation: float = 0.0
     train: Train | None = None
     encounter: Encounter | None = None
+    cathode_field: float | None = None

@@ -107,6 +107,7 @@ _KINDS = (
     Kind("frequency", "a frequency", "'{} MHz'", "Hz", (Form(("MHz", "kHz", "GHz", "Hz", "THz")),)),
     Kind("voltage", "a voltage", "'{} kV'", "V", (Form(("kV", "MV", "V", "GV")),)),
     Kind("angle", "an angle", "'{} deg' or '{} rad'", "rad", (Form(("deg", "rad", "mrad")),)),
+    Kind("electric field", "an electric field", "'{} MV/m'", "V/m", (Form(("MV/m", "kV/m", "V/m", "GV/m")),)),
     Kind("field", "a magnetic field", "'{} T'", "T", (Form(("T", "mT", "uT", "kG", "G")),)),
     Kind("gradient", "a field gradient", "'{} T/m'", "T/m", (Form(("T/m", "mT/m", "T/mm", "T/cm", "G/cm", "kG/cm")),)),
     Kind(

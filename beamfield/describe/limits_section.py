@@ -30,10 +30,32 @@ _NEEDS = {  # what a result needs -> whether a bunch, in a ring or None and in i
         lambda bunch, ring, near: ring is not None or (near.encounter is not None and near.encounter.beta is not None),
         "beta functions where the bunches meet; add other_bunch.beta, or a ring",
     ),
+    "momentum_spread": (
+        lambda bunch, ring, near: bunch.momentum_spread is not None,
+        "a momentum spread; add bunch.momentum_spread",
+    ),
+    "chamber": (lambda bunch, ring, near: near.chamber is not None, "a wall; add surroundings.chamber"),
+    "chamber or ends": (
+        lambda bunch, ring, near: near.chamber is not None or not bunch.coasting,
+        "a wall where a beam has no ends; add surroundings.chamber",
+    ),
+    "chamber or slopes": (
+        lambda bunch, ring, near: near.chamber is not None or not _level(bunch),
+        "a wall where a line density is level; add surroundings.chamber",
+    ),
+    "cathode": (
+        lambda bunch, ring, near: near.cathode_field is not None,
+        "a cathode with a field; add surroundings.cathode.field",
+    ),
+    "rf": (lambda bunch, ring, near: ring is None or ring.rf is not None, "cavities; add ring.rf"),
 }
-_GIVES = {"ring": "ring", "train": "bunch.train", "walls": "surroundings"} | dict.fromkeys(
+_GIVES = {"ring": "ring", "rf": "ring", "train": "bunch.train", "walls": "surroundings"} | dict.fromkeys(
     ("encounter", "opposing", "aside", "beta"), "other_bunch"
 )  # what is needed -> the section that says it
+
+
+def _level(bunch):
+    return bunch.shape is not None and not bunch.shape.ellipsoid and bunch.shape.longitudinal in ("uniform", "coasting")
 
 
 def limits(reading):

@@ -4,6 +4,7 @@ No anchors, aliases, merge keys, tags, repeated keys or further documents; bound
 """
 
 import re
+from itertools import accumulate
 
 from beamfield.describe.nearest import excerpt
 from beamfield.describe.tree import Mapping, Scalar, Sequence
@@ -13,6 +14,7 @@ MOST_BYTES = 1_000_000
 MOST_DEPTH = 12
 _EMPTY = "is empty; 'beamfield new' prints a case to start from"
 _EXPLAINED = 30_000  # characters up to which a broken text is read a second time for a better message
+_MOST_BRACKETS = 200  # open at once, those in words included: a parser may take the square of it
 _CONTROL = re.compile("[^\t\n\r\x20-\x7e\x85\xa0-\ud7ff\ue000-\ufefe\uff00-\ufffd\U00010000-\U0010ffff]")
 _TAB = re.compile(r"^[^#\t\n]*\t", re.MULTILINE)
 
@@ -58,6 +60,15 @@ def _check_signs(text, file):
     tab = _TAB.search(text)
     if tab:
         _refuse("a tab; indent and separate with spaces", file, *_place(text, tab.end() - 1))
+    deep = _too_deep(text)
+    if deep is not None:
+        _refuse("deeper than any case is", file, *_place(text, deep))
+
+
+def _too_deep(text):
+    """Offset of the bracket with which more are open than any case needs, or None."""
+    depths = accumulate((sign in "[{") - (sign in "]}") for sign in text)
+    return next((offset for offset, depth in enumerate(depths) if depth > _MOST_BRACKETS), None)
 
 
 def _place(text, offset):

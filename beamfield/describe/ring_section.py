@@ -1,5 +1,8 @@
 """The section `ring` -> Ring."""
 
+from dataclasses import replace
+
+from beamfield.beam.rf import Rf
 from beamfield.beam.ring import Optics, Ring
 from beamfield.describe.file_word import read_optics
 from beamfield.describe.tree import Mapping
@@ -16,8 +19,16 @@ def ring(reading, folder):
     if None in tune or circumference is None or bunches is None:
         return None
     if "ring.optics" not in reading:
-        return Ring.smooth(circumference, tune, bunches)
-    return reading.attempt("ring", Ring, circumference, tune, bunches, _optics(reading, circumference, folder))
+        return Ring.smooth(circumference, tune, bunches, _rf(reading))
+    ring = reading.attempt("ring", Ring, circumference, tune, bunches, _optics(reading, circumference, folder))
+    return ring and replace(ring, rf=_rf(reading))
+
+
+def _rf(reading):
+    if "ring.rf" not in reading:
+        return None
+    parts = reading.si("ring.rf.voltage"), reading.word("ring.rf.harmonic"), reading.si("ring.rf.transition_gamma")
+    return reading.attempt("ring.rf", Rf, *parts)
 
 
 def _tune(reading, key):

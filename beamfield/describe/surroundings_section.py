@@ -25,6 +25,7 @@ def surroundings(reading):
         pole_half_gap=reading.si("surroundings.poles.half_gap"),
         cathode=reading.si("surroundings.cathode.at"),
         neutralisation=reading.si("surroundings.neutralisation", absent=0.0) or 0.0,
+        cathode_field=reading.si("surroundings.cathode.field"),
     )
 
 

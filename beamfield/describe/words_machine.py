@@ -22,6 +22,9 @@ _SURROUNDINGS = (
     Key("surroundings.cathode", "section", "A conducting plane across the axis behind the bunch."),
     Key("surroundings.cathode.at", "length", "Its distance behind the centre.", "2 mm", required=True, **_GAP),
     Key(
+        "surroundings.cathode.field", "electric field", "The field that draws from it.", "40 MV/m", above=0.0, most=1e11
+    ),
+    Key(
         "surroundings.neutralisation",
         "number",
         "Charge at rest in the beam that cancels its own, as a fraction of it.",
@@ -58,6 +61,26 @@ _RING = (
         "Mean horizontal dispersion.",
         "2.7 m",
         least=-1e4,
+        most=1e4,
+    ),
+    Key("ring.rf", "section", "The cavities that bunch the beam; a stationary bucket, no acceleration."),
+    Key("ring.rf.voltage", "voltage", "Amplitude of a turn.", "8 kV", required=True, above=0.0, most=1e10),
+    Key(
+        "ring.rf.harmonic",
+        "whole",
+        "Its frequency over that of a turn.",
+        "2",
+        required=True,
+        least=1,
+        most=1_000_000,
+    ),
+    Key(
+        "ring.rf.transition_gamma",
+        "number",
+        "Gamma at which a turn takes the same time for all momenta.",
+        "4.1",
+        required=True,
+        above=0.0,
         most=1e4,
     ),
 )

@@ -10,14 +10,20 @@ from beamfield.estimate.density_source import central_density
 from beamfield.estimate.encounter_force import encounter_force
 from beamfield.estimate.frame import frame
 from beamfield.estimate.image_shift import image_shift
+from beamfield.estimate.intensity_limit import intensity_limit
+from beamfield.estimate.longitudinal import longitudinal
 from beamfield.estimate.past_length import memory
 from beamfield.estimate.rms_average import space_charge_ratio
 from beamfield.estimate.self_force import self_force
+from beamfield.estimate.synchrotron_motion import synchrotron_motion
 from beamfield.estimate.train_force import train_force
 from beamfield.estimate.tune_shift import tune_shift
 from beamfield.laws import intensity
 
-QUESTIONS = (frame, self_force, space_charge_ratio, tune_shift, image_shift, train_force, encounter_force, memory)
+QUESTIONS = (
+    *(frame, self_force, space_charge_ratio, tune_shift, image_shift, train_force, encounter_force, memory),
+    *(longitudinal, synchrotron_motion, intensity_limit),
+)
 ASTRAY = 1e-3  # of the density at the centre: a sum that misses it by more is not to be used
 
 

@@ -8,9 +8,11 @@ from beamfield.estimate.entries_bunch import BUNCH
 from beamfield.estimate.entries_company import COMPANY
 from beamfield.estimate.entries_domain import DOMAIN
 from beamfield.estimate.entries_effect import EFFECT
+from beamfield.estimate.entries_longitudinal import LONGITUDINAL_EFFECT, LONGITUDINAL_STRENGTH
 from beamfield.estimate.entries_strength import STRENGTH
 from beamfield.estimate.entries_walls import WALLS
 
 __all__ = ["CATALOGUE", "QUESTIONS", "Entry"]
 
-CATALOGUE = {entry.name: entry for entry in (*BUNCH, *STRENGTH, *EFFECT, *WALLS, *COMPANY, *DOMAIN)}
+_ENTRIES = (*BUNCH, *STRENGTH, *LONGITUDINAL_STRENGTH, *EFFECT, *LONGITUDINAL_EFFECT, *WALLS, *COMPANY, *DOMAIN)
+CATALOGUE = {entry.name: entry for entry in _ENTRIES}

@@ -42,10 +42,14 @@ def odd(field):
 
 
 def smooth_slopes(field, sigma, axes=(0, 1, 2)):
-    """The same by least squares on both sides, for the noisy field of particles: the slope within 0.3 rms."""
+    """The same by least squares on both sides, for the noisy field of particles: the slope within 0.3 rms.
+
+    (2, A): of a straight line, and of one with a cubic term, which shows how far it bends.
+    """
     steps = np.concatenate([-STENCIL[::-1], STENCIL])
     values = field(stencil(sigma, axes, steps)).reshape(3, len(axes), -1)
-    return np.array([steps @ values[axis, row] / (steps @ steps * sigma[axis]) for row, axis in enumerate(axes)])
+    own = np.array([values[axis, row] / sigma[axis] for row, axis in enumerate(axes)])
+    return np.array([own @ np.linalg.pinv(steps ** np.array(powers)[:, None])[:, 0] for powers in ([1], [1, 3])])
 
 
 def peak_place(along, sigma, edge, cusp=False):

@@ -3,7 +3,7 @@ direct sum.
 
     E_i = sum_j q_j (r_i - r_j) / (|r_i - r_j|^2 + a^2)^(3/2)
 
-How it is done is told by beamfield/kernels, to be read in this order: tree, extent, expansion, moments, far_field,
+How it is done is told by beamfield/kernels, to be read in this order: cells, extent, expansion, moments, far_field,
 local_field, near_field, traversal. Results do not depend on the number of threads.
 """
 
@@ -13,12 +13,12 @@ from math import floor, isfinite, log2, log10
 import numpy as np
 
 from beamfield.errors import CallError
+from beamfield.kernels.cells import plant
 from beamfield.kernels.expansion import kept_rows, tables
 from beamfield.kernels.extent import COLUMNS, measure
 from beamfield.kernels.moments import gather_moments
 from beamfield.kernels.moving_charge import superpose
 from beamfield.kernels.traversal import Side, rules_for, walk
-from beamfield.kernels.tree import plant
 
 CHECKED = 96  # points at which a result is compared with the direct sum; so many points or fewer are summed directly
 LEAF = 32  # places to a leaf

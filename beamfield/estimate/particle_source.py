@@ -8,11 +8,12 @@ from functools import partial
 import numpy as np
 
 from beamfield.beam.particles import MacroParticles
-from beamfield.constants import COULOMB
+from beamfield.constants import COULOMB, SPEED_OF_LIGHT
 
 NEEDLE = 2.0  # rest-frame aspect beyond which clouds are drawn out to rods
 ROD = 0.4  # half length of a rod over the rms length
 WIDER = 2.0**0.25  # clouds this much wider double the bias of fourth order
+RUN, RUNS, GOLDEN = 64, 32, 0.5 * (5.0**0.5 - 1.0)  # particles kept together in a half, runs at least
 TILT = 0.01  # spread of momenta, in units of m c, beyond which each particle keeps its own
 
 
@@ -62,12 +63,25 @@ class ParticleSource:
             partial(sum_of, whole, WIDER * self.size, self.rods, self.own_momenta),
         )
 
+    def magnetic(self, points):
+        """Lab B (3, M) [T] at lab points (3, M) where particles keep their own momenta; else None."""
+        if not self.own_momenta:
+            return None
+        macro = self.bunch.macro
+        return cloud_fields(self.bunch, macro, self.size, macro.momenta, points)[3:] / SPEED_OF_LIGHT
+
 
 def half_of(macro):
-    """Every other particle: the spread between halves is the shot noise of the whole."""
-    weights = macro.weights[::2]
-    momenta = None if macro.momenta is None else macro.momenta[:, ::2]
-    return MacroParticles(macro.positions[:, ::2], weights / weights.sum(), momenta, macro.source)
+    """Half of the particles: its spread against the whole is the shot noise of the whole.
+
+    Runs of neighbours in the file, taken where the multiples of the golden ratio fall: they cut neither a sorted file
+    in two nor one of quasi-random points, of which every other may lie on one side.
+    """
+    run = min(RUN, max(1, macro.count // RUNS))
+    chosen = np.arange(macro.count) // run * GOLDEN % 1.0 < 0.5
+    weights = macro.weights[chosen]
+    momenta = None if macro.momenta is None else macro.momenta[:, chosen]
+    return MacroParticles(macro.positions[:, chosen], weights / weights.sum(), momenta, macro.source)
 
 
 def spread_of(macro):
@@ -90,7 +104,16 @@ def cloud_field(bunch, macro, size, rods, own_momenta, points):
         clouds.superpose_rods(points, positions, weights, bunch.gamma, length, size**2, out)
         return bunch.gamma * out
     momenta = macro.momenta if own_momenta else np.array([[0.0], [0.0], [bunch.beta_gamma]])
+    return cloud_fields(bunch, macro, size, momenta, points)[:3]
+
+
+def cloud_fields(bunch, macro, size, momenta, points):
+    """Lab E [V/m] and c B [V/m], (6, M), of round clouds, each with its momentum (3, N) or all with one (3, 1)."""
+    from beamfield.kernels import clouds
+
+    points, positions = np.ascontiguousarray(points, float), np.ascontiguousarray(macro.positions)
+    weights = COULOMB * bunch.charge * macro.weights
     momenta = np.ascontiguousarray(np.broadcast_to(momenta, (3, macro.count)))
     both = np.empty((6, points.shape[1]))
     clouds.superpose_clouds(points, positions, weights, momenta, size**2, both)
-    return both[:3]
+    return both

@@ -32,12 +32,11 @@ def gradients(bunch, numerics, cathode=None, across=1.0):
         return closed, 1e-9 * abs(closed), closed, "closed form"
     source = source_of(bunch, numerics, cathode, across)
     sigma = np.where(np.isfinite(bunch.sigma), bunch.sigma, 1.0)
-    if bunch.macro is not None:
-        return *asked(source, lambda field: smooth_slopes(field, sigma, axes)), None, source.method
-    seen = odd if cathode is not None else lambda field: field
-    (value, fewer), (doubt, _) = asked(source, lambda field: slopes(seen(field), sigma, axes))
+    law = slopes if bunch.macro is None else smooth_slopes
+    seen = odd if cathode is not None and bunch.macro is None else lambda field: field
+    (value, other), (doubt, _) = asked(source, lambda field: law(seen(field), sigma, axes))
     closed = None if closed is None else closed[list(axes)]
-    return value, np.hypot(doubt, fewer - value), closed, source.method
+    return value, np.hypot(doubt, other - value), closed, source.method
 
 
 def self_force(bunch, surroundings, ring, numerics):

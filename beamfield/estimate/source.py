@@ -38,7 +38,8 @@ def self_field(bunch, numerics, points, cathode=None):
     field, doubt = asked(source, lambda lab: lab(points))
     if cathode is not None:
         return _before(bunch, source, cathode, points, field, doubt)
-    return _told(bunch, field, field, doubt, closed_field(bunch, points), source.method)
+    magnetic = source.magnetic(points) if bunch.macro is not None else None
+    return _told(bunch, field, field, doubt, closed_field(bunch, points), source.method, magnetic)
 
 
 def _before(bunch, source, cathode, points, field, doubt):
@@ -50,9 +51,11 @@ def _before(bunch, source, cathode, points, field, doubt):
     return _told(bunch, free * (field + image), free * (field - image), np.hypot(doubt, more), closed, method)
 
 
-def _told(bunch, field, turned, doubt, closed, method):
-    """turned, the field with that of what runs the other way reversed: its magnetic part has the other sign."""
+def _told(bunch, field, turned, doubt, closed, method, magnetic=None):
+    """turned, the field with that of what runs the other way reversed: its magnetic part has the other sign; magnetic,
+    B of particles that keep their own momenta."""
     total = np.square(field).sum()
     relative = float(np.sqrt(np.square(doubt).sum() / total)) if total > 0.0 else 0.0
-    magnetic = bunch.beta / SPEED_OF_LIGHT * np.stack([-turned[1], turned[0], np.zeros(field.shape[1])])
+    if magnetic is None:
+        magnetic = bunch.beta / SPEED_OF_LIGHT * np.stack([-turned[1], turned[0], np.zeros(field.shape[1])])
     return Field(field, magnetic, relative, closed, method)

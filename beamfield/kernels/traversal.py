@@ -19,6 +19,7 @@ from typing import NamedTuple
 import numpy as np
 from numba import get_num_threads
 
+from beamfield.kernels.cells import longer
 from beamfield.kernels.compiled import compiled, inner
 from beamfield.kernels.expansion import STEP
 from beamfield.kernels.extent import COUNT, RADIUS, SIZE, STRENGTH, power
@@ -34,7 +35,6 @@ from beamfield.kernels.local_field import (
     take_place,
 )
 from beamfield.kernels.near_field import BLOCK, add_near
-from beamfield.kernels.tree import longer
 
 TOUCH = 1.2  # radii of two far cells together, at most, over their distance
 LARGE = 2.0  # ratio of the sizes of two cells of which one is large beside the other

@@ -41,6 +41,13 @@ def product_gradient(transverse, across, longitudinal, half):
     return np.array([*(section_curvature(transverse, across, s) @ (STEP * s * line)), section @ (STEP * s * bend)])
 
 
+def centre_potential(transverse, across, longitudinal, half):
+    """Potential [1/m] at the centre, nought far away."""
+    s = _variances(across, half)
+    line = smoothed(longitudinal, half, np.zeros(1), s)[0][:, 0]
+    return float(section_density(transverse, across, s) @ (STEP * s * line))
+
+
 def section_density(transverse, across, s):
     """2 pi times the transverse density on the axis, smoothed by variances s (K,) [m^2]: (K,) [1/m^2]."""
     a, b = across

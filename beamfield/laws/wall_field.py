@@ -38,12 +38,12 @@ def image_field(shape, half_width, half_height, line, points):
 
 def wall_map(shape, half_width, half_height, z):
     """F and dF/dz [1/m] at complex places z [m] in the chamber; F(0) = 0, abs(F) = 1 on the wall."""
-    if shape == "round" or (shape == "elliptic" and half_width == half_height):
+    if shape == "round" or (half_width == half_height and shape == "elliptic"):
         return z / half_width, np.full(np.shape(z), 1.0 / half_width)
     if shape == "plates" or half_width == inf:
         wave = np.tanh(pi * z / (4.0 * half_height))
         return wave, pi / (4.0 * half_height) * (1.0 - wave**2)
-    if (half_width > half_height) == (shape == "rectangular") and half_width != half_height:
+    if (half_width > half_height and shape == "rectangular") or (half_width < half_height and shape == "elliptic"):
         disc, slope = wall_map(shape, half_height, half_width, 1j * z)
         return -1j * disc, slope
     return (_rectangle if shape == "rectangular" else _ellipse)(half_width, half_height, z)

@@ -15,6 +15,12 @@ NEEDS = {
     "opposing": "an opposing bunch in `other_bunch`",
     "aside": "`other_bunch.offset` in x or y",
     "beta": "`other_bunch.beta` or `ring`",
+    "momentum_spread": "`bunch.momentum_spread`",
+    "chamber": "`surroundings.chamber`",
+    "chamber or ends": "`surroundings.chamber` where the beam is coasting",
+    "chamber or slopes": "`surroundings.chamber` where the line density is level",
+    "cathode": "`surroundings.cathode.field`",
+    "rf": "`ring.rf`",
 }
 
 

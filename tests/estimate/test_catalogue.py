@@ -4,8 +4,9 @@ import pytest
 
 from beamfield.estimate.catalogue import CATALOGUE, QUESTIONS
 
-UNITS = {"1", "C", "A", "m", "V", "ohm", "deg", "1/m", "1/m2", "V/m", "V/m2", "T m", "eV/c", "eV/m", "rad", "rad/m"}
+UNITS = {"1", "C", "A", "m", "V", "ohm", "deg", "1/m", "1/m2", "V/m", "V/m2", "T m", "eV/c", "eV/m", "eV", "rad", "rad/m"}
 NEEDS = {"bunch", "ring", "emittance", "walls", "density", "train", "encounter", "opposing", "aside", "beta"}
+NEEDS |= {"momentum_spread", "rf", "chamber", "chamber or ends", "chamber or slopes", "cathode"}
 FIRST = [
     *("gamma", "beta", "momentum", "rigidity", "particles", "bunch_charge", "peak_current", "peak_line_density"),
     *("bunching_factor", "perveance", "field_gradient_x", "field_gradient_y", "field_gradient_z"),

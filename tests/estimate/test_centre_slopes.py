@@ -82,5 +82,5 @@ def test_peak_place_at_a_cusp(sign):
 def test_peak_place_of_a_top_near_an_edge():
     """Closed form: where the density fades out at its edge the top is smooth, a little inside."""
     near = 1e-5
-    place = peak_place(lambda r: -np.square(r - 0.68), 0.35, 0.7)
+    place = peak_place(lambda r: 1.0 - np.square(r - 0.68), 0.35, 0.7)
     assert place == pytest.approx(0.68, rel=near, abs=0.0)

@@ -2,6 +2,7 @@
 
 from dataclasses import replace
 from functools import cache
+from itertools import pairwise
 from math import pi, sqrt
 
 import numpy as np
@@ -15,7 +16,7 @@ from beamfield.estimate.rms_average import space_charge_ratio
 from beamfield.estimate.textbook import closed_field
 from tests.estimate.made_bunches import ASPECTS, BEAMS, BUNCHES, DEFAULT, honest, made
 
-GOOD = 1e-4
+GOOD = 1e-3  # a mean over 343 places
 COVERED, NOT_SCARED = 0.9, 0.85
 SECTIONS = (1.0, 10.0)
 EMITTANCE = (2e-6, 5e-6)
@@ -47,7 +48,7 @@ def symmetric(bunch):
 
 
 def gaussian_section(bunch):
-    """Heat kernel: 2 pi integral over s of <x T_s x / (sigma^2 + s)> <Lambda_s>, one integral since both means are closed.
+    """Heat kernel: 2 pi integral over s of <x T_s x / (sigma^2 + s)> <Lambda_s>, where both means are closed.
 
     The mean over a uniform line of half length l of the same line smoothed by variance s is a mean over differences.
     """
@@ -74,7 +75,7 @@ def gaussian_section(bunch):
 
     low, high = 2.0 * np.log(min(x, y, z)) - 40.0, 2.0 * np.log(max(x, y, z)) + 40.0
     cuts = np.linspace(low, high, 24)
-    return [sum(quad(integrand, a, b, args=(axis,))[0] for a, b in zip(cuts, cuts[1:], strict=False)) for axis in (0, 1)]
+    return [sum(quad(integrand, a, b, args=(axis,))[0] for a, b in pairwise(cuts)) for axis in (0, 1)]
 
 
 def long_bunch(bunch):
@@ -86,9 +87,13 @@ def long_bunch(bunch):
 def cases():
     """((name, aspect, section), route to <x E_x> at rest)."""
     for section in SECTIONS:
-        yield from (((name, a, section), symmetric) for name in BUNCHES if "ellipsoid" in name for a in ASPECTS)
-        yield from ((("gaussian", a, section), symmetric) for a in ASPECTS)
-        yield from (((f"gaussian x {way}", a, section), gaussian_section) for way in ("uniform", "parabolic") for a in ASPECTS[::2])
+        yield from (((name, a, section), symmetric) for name in BUNCHES if "ellipsoid" in name for a in ASPECTS[::3])
+        yield from ((("gaussian", a, section), symmetric) for a in ASPECTS[::3])
+        yield from (
+            ((f"gaussian x {way}", a, section), gaussian_section)
+            for way in ("uniform", "parabolic")
+            for a in ASPECTS[::3]
+        )
         yield from (((name, 1e5, section), long_bunch) for name in LONG)
 
 

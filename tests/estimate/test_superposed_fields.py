@@ -12,6 +12,7 @@ import numpy as np
 import pytest
 
 from beamfield.estimate.source import self_field
+from beamfield.estimate.textbook import closed_field
 from tests.estimate.made_bunches import (
     ASPECTS,
     BEAMS,
@@ -26,6 +27,7 @@ from tests.estimate.made_bunches import (
 )
 
 HARD, TYPICAL = 1e-3, 1e-6
+DIGITS = 1e-10  # of the table of product bunches
 COVERED, NOT_SCARED = 0.9, 0.85  # shares of the cases
 TABLE = Path(__file__).parents[1] / "reference" / "product_fields.csv"
 
@@ -47,7 +49,8 @@ def product_error(case):
     bunch = made(*case)
     coulomb = 1.0 / (4.0 * np.pi * 8.8541878188e-12) * bunch.charge / WIDTH**2
     field = self_field(bunch, DEFAULT, unit * np.array(bunch.sigma)[:, None])
-    return rms_error(field.E, coulomb * np.array([[bunch.gamma], [bunch.gamma], [1.0]]) * rest), field.doubt
+    error = rms_error(field.E, coulomb * np.array([[bunch.gamma], [bunch.gamma], [1.0]]) * rest)
+    return max(0.0, error - DIGITS), field.doubt
 
 
 def every_error():
@@ -76,9 +79,23 @@ def test_coasting_beams(name):
 
 def test_products_without_closed_form():
     """Table by Coulomb's law, along z first and then round the edge: tests/reference/make_product_fields.py."""
-    assert len(table()) == 0
+    assert len(table()) == 60
     worst = max(table(), key=lambda case: product_error(case)[0])
     assert product_error(worst)[0] < HARD, worst
+
+
+@pytest.mark.parametrize("name", ["gaussian", "uniform-cylinder", "parabolic-ellipsoid", "gaussian x uniform"])
+@pytest.mark.parametrize("aspect", [0.1, 1e3])
+def test_no_place_on_the_axes_stands_out(name, aspect):
+    """Closed form: at 800 places close to each other on the axes of a flat section, no single one is wrong."""
+    bunch = made(name, aspect, 10.0)
+    along = np.linspace(-2.9, 2.9, 400)
+    points = np.zeros((3, 800))
+    points[0, :400], points[1, 400:] = along * bunch.sigma[0], along * bunch.sigma[1]
+    points[:, ::3] += 1e-9 * np.array(bunch.sigma)[:, None]  # some a little beside them
+    truth = closed_field(bunch, points)
+    off = np.linalg.norm(self_field(bunch, DEFAULT, points).E - truth, axis=0)
+    assert off.max() < HARD * np.linalg.norm(truth, axis=0).max()
 
 
 def test_half_of_all_cases_are_good_to_a_millionth():
