@@ -11,7 +11,7 @@ _SIZES = {  # shape -> the keys of half its width and half its height; None wher
     "plates": (None, "half_gap"),
     "rectangular": ("half_width", "half_height"),
 }
-_FREE = "its images shift the tunes of a ring; without a ring, forces across the motion are those of free space"
+_FREE = "read and checked; its images shift the tunes of a ring, without one forces across are those of free space"
 _KEYS = ("radius", "half_width", "half_height", "half_gap")
 
 

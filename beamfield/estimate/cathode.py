@@ -63,6 +63,21 @@ def force_weight(bunch):
     return bunch.gamma**2 + bunch.beta_gamma**2
 
 
+def mapped(evaluate, bunch, distance):
+    """An evaluate(points) -> {name: values} of a field map with the mirror image added; nothing inside the cathode."""
+    if distance is None:
+        return evaluate
+    pull = force_weight(bunch)
+    turned = {"E": MIRROR, "B": 1.0, "force": np.array([[-pull], [-pull], [1.0]]), "phi": -1.0, "A": 1.0}
+
+    def both(points):
+        x, y, z = points
+        own, image = evaluate(points), evaluate(np.stack([x, y, -2.0 * distance - z]))
+        return {name: ~behind(points, distance) * (own[name] + turned[name] * image[name]) for name in own}
+
+    return both
+
+
 def odd(field):
     """The part of a field that is odd about the centre: what slopes there are drawn from."""
     return lambda points: 0.5 * (field(points) - field(-points))

@@ -21,7 +21,8 @@ EFFECT = (
             "effect",
             "Strength of the self-field as a lens for small {i}: the kappa in {i}'' = kappa {i}; positive, it "
             "defocuses.",
-            "kappa_{i} = q (dE_{i}/d{i}) / (gamma^3 m beta^2 c^2)",
+            "kappa_{i} = q (dE_{i}/d{i}) / (gamma^3 m beta^2 c^2); across, a background "
+            "at rest leaves 1 - gamma^2 f of it",
             "small amplitudes; free space; slopes small against 1",
             _NEWTON,
         ),

@@ -18,11 +18,11 @@ WALLS = (
             "tune_shift_image_{i}",
             "1",
             "effect",
-            "Shift of the {i} tune of one particle by the images in chamber and poles, at the peak line density; adds to "
-            "tune_shift_{i}.",
-            "-1/(4 pi) integral of beta_{i} kappa_{i} ds; kappa_y = -kappa_x = 4 r_0/(beta^2 gamma) [eps_1/h^2 (m + (p - "
-            "m)/gamma^2 - f p) + beta^2 eps_2/g^2 m], p, m peak and mean line density, h, g half heights of chamber and "
-            "poles, f neutralisation, eps_2 = pi^2/24",
+            "Shift of the {i} tune of one particle by the images in chamber and poles, at the peak line density; adds "
+            "to tune_shift_{i}.",
+            "-1/(4 pi) integral of beta_{i} kappa_{i} ds; kappa_y = -kappa_x = 4 r_0/(beta^2 gamma) [eps_1/h^2 (m + "
+            "(p - m)/gamma^2 - f p) + beta^2 eps_2/g^2 m], p, m peak and mean line density, h, g half heights of "
+            "chamber and poles, f neutralisation, eps_2 = pi^2/24",
             _LONG,
             _LASLETT,
             ("ring", "walls"),
@@ -37,8 +37,8 @@ WALLS = (
             "Shift of the {i} tune of the beam moving as a whole, by the images in chamber and poles, at the peak line "
             "density.",
             "-1/(4 pi) integral of beta_{i} kappa ds; kappa = 4 r_0/(beta^2 gamma) [xi_1/h^2 p/gamma^2 + beta^2 "
-            "(eps_1/h^2 + eps_2/g^2) m], coefficients of the plane {i}; where the field of the oscillation goes through "
-            "the chamber [xi_1/h^2 (m + (p - m)/gamma^2) + beta^2 xi_2/g^2 m]",
+            "(eps_1/h^2 + eps_2/g^2) m], coefficients of the plane {i}; where the field of the oscillation goes "
+            "through the chamber [xi_1/h^2 (m + (p - m)/gamma^2) + beta^2 xi_2/g^2 m]",
             _LONG + "; perfectly conducting chamber",
             _LASLETT,
             ("ring", "walls"),

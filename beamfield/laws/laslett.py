@@ -54,7 +54,7 @@ def _rectangle(w, h):
 
 
 def _ellipse(w, h):
-    """eps_1 = h^2/(12 d^2) (theta_3^4 + theta_4^4 - 2), h^2/R^2 = h^2/(4 d^2) theta_2^4 at the nome q = (w - h)/(w + h),
+    """eps_1 = h^2/(12 d^2) (theta_3^4 + theta_4^4 - 2), h^2/R^2 = h^2/(4 d^2) theta_2^4, nome q = (w - h)/(w + h),
     d^2 = w^2 - h^2.
 
     In elliptic integrals: eps_1 = h^2/(12 d^2) [(1 + k'^2) (2 K / pi)^2 - 2]. Near the circle, where that cancels,

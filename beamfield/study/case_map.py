@@ -4,6 +4,7 @@ from dataclasses import replace
 
 from beamfield.describe.map_words import grid_for
 from beamfield.estimate.bunch_map import bunch_map
+from beamfield.estimate.cathode import mapped
 from beamfield.estimate.field_map import field_map
 from beamfield.report.map_csv import lines
 from beamfield.report.map_file import map_writer, write_map
@@ -27,4 +28,5 @@ def case_map(case, overs=(), ats=(), method=None):
     """FieldMap of a case."""
     grid = grid_for(case.bunch, overs, ats)
     numerics = replace(case.numerics, method=method) if method else case.numerics
-    return field_map(case.title, bunch_map(case.bunch, numerics), grid)
+    evaluate = mapped(bunch_map(case.bunch, numerics), case.bunch, case.surroundings.cathode)
+    return field_map(case.title, evaluate, grid)

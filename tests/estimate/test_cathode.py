@@ -10,7 +10,8 @@ from beamfield.beam.numerics import Numerics
 from beamfield.beam.particles import MacroParticles
 from beamfield.beam.surroundings import Surroundings
 from beamfield.constants import SPEED_OF_LIGHT
-from beamfield.estimate.cathode import force_weight
+from beamfield.estimate.bunch_map import bunch_map
+from beamfield.estimate.cathode import force_weight, mapped
 from beamfield.estimate.self_force import self_force
 from beamfield.estimate.source import self_field
 from beamfield.estimate.superposition import superpose
@@ -88,9 +89,23 @@ def test_far_image_is_a_point_charge():
 
 
 def test_magnetic_force_of_the_image_helps():
-    """Two ways to one number: q (E + v x B) of the whole field, and E of the image (1 + beta^2) / (1 - beta^2) times."""
+    """Two ways to one number: q (E + v x B) of the whole field, and E of the image (1 + beta^2) gamma^2 times."""
     bunch, points = made("gaussian", aspect=0.5, gamma=2.0), np.array([[1e-3], [0.0], [0.0]])
     near, alone = self_field(bunch, DEFAULT, points, 2e-3), self_field(bunch, DEFAULT, points)
     whole = near.E[0, 0] - bunch.beta * SPEED_OF_LIGHT * near.B[1, 0]
     parts = (alone.E + force_weight(bunch) * (near.E - alone.E))[0, 0] / bunch.gamma**2
     assert whole == pytest.approx(parts, rel=1e-10)
+
+
+def test_maps_have_the_image_too():
+    """Two ways to one field, and q (E + v x B) for the force; on the cathode no potential."""
+    bunch, at = made("gaussian", aspect=0.5, gamma=2.0), 2e-3
+    points = np.array([[1e-3, 0.5e-3, 1e-3], [0.0, 1e-3, 0.0], [0.3e-3, -2e-3, -2.1e-3]])
+    values, field = mapped(bunch_map(bunch, DEFAULT), bunch, at)(points), self_field(bunch, DEFAULT, points, at)
+    assert values["E"] == pytest.approx(field.E, rel=1e-12, abs=1e-12 * np.abs(field.E).max())
+    assert values["B"] == pytest.approx(field.B, rel=1e-12, abs=1e-12 * np.abs(field.B).max())
+    velocity = np.array([[0.0], [0.0], [bunch.beta * SPEED_OF_LIGHT]])
+    force = bunch.species.charge * (field.E + np.cross(velocity, field.B, axis=0))
+    assert values["force"] == pytest.approx(force, abs=1e-10 * np.abs(force).max())
+    assert abs(values["phi"][1]) < 1e-10 * abs(values["phi"][0])
+    assert not values["E"][:, 2].any()
