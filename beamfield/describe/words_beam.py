@@ -59,7 +59,7 @@ BEAM = (
         "frequency",
         "Bunches a second; turns a mean current into a charge where there is no ring.",
         "162.5 MHz",
-        above=0.0,
+        least=1e-6,
         most=1e12,
     ),
     Key(
@@ -90,7 +90,7 @@ BEAM = (
         "momentum spread",
         "Relative spread of the momenta, dp/p.",
         "1.5e-3 rms",
-        above=0.0,
+        least=1e-9,
         most=0.5,
     ),
 )

@@ -9,7 +9,7 @@ from beamfield.describe.words_beam import BEAM
 
 MOST_BUNCHES = 1000
 _PLACE = {"least": -1e3, "most": 1e3}
-_BETA = {"above": 0.0, "most": 1e6}
+_BETA = {"least": 1e-6, "most": 1e6}
 _SAYS = {
     "bunch": "Another bunch, opposing or beside ours; what it does to ours is in the results.",
     "bunch.shape": "How its charges are spread: a word, or a profile across and one along.",
@@ -41,7 +41,7 @@ _TRAIN = (
         "From centre to centre, in metres or in seconds.",
         "3 ns",
         required=True,
-        above=0.0,
+        least=1e-9,
         most=1e6,
     ),
     Key(

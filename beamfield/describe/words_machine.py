@@ -3,11 +3,11 @@
 from beamfield.beam.surroundings import CHAMBERS
 from beamfield.describe.key import Key
 
-_GAP = {"above": 0.0, "most": 1e3}
-_BETA = {"above": 0.0, "most": 1e6}
+_GAP = {"least": 1e-9, "most": 1e3}
+_BETA = {"least": 1e-6, "most": 1e6}
 _ALPHA = {"least": -1e6, "most": 1e6}
-_TUNE = {"above": 0.0, "most": 1e4}
-_LENGTH = {"above": 0.0, "most": 1e6}
+_TUNE = {"least": 1e-3, "most": 1e4}
+_LENGTH = {"least": 1e-6, "most": 1e6}
 
 _SURROUNDINGS = (
     Key("surroundings", "section", "What stands round the bunch; free space without it."),
@@ -22,7 +22,7 @@ _SURROUNDINGS = (
     Key("surroundings.cathode", "section", "A conducting plane across the axis behind the bunch."),
     Key("surroundings.cathode.at", "length", "Its distance behind the centre.", "2 mm", required=True, **_GAP),
     Key(
-        "surroundings.cathode.field", "electric field", "The field that draws from it.", "40 MV/m", above=0.0, most=1e11
+        "surroundings.cathode.field", "electric field", "The field that draws from it.", "40 MV/m", least=1e-3, most=1e11
     ),
     Key(
         "surroundings.neutralisation",
@@ -64,7 +64,7 @@ _RING = (
         most=1e4,
     ),
     Key("ring.rf", "section", "The cavities that bunch the beam; a stationary bucket, no acceleration."),
-    Key("ring.rf.voltage", "voltage", "Amplitude of a turn.", "8 kV", required=True, above=0.0, most=1e10),
+    Key("ring.rf.voltage", "voltage", "Amplitude of a turn.", "8 kV", required=True, least=1e-3, most=1e10),
     Key(
         "ring.rf.harmonic",
         "whole",
@@ -80,7 +80,7 @@ _RING = (
         "Gamma at which a turn takes the same time for all momenta.",
         "4.1",
         required=True,
-        above=0.0,
+        least=1e-3,
         most=1e4,
     ),
 )
@@ -125,7 +125,7 @@ _PARTS = (  # name, what it is; then key, kind, what it says, example, what it m
     (
         ("gap", "A thin RF gap."),
         ("voltage", "voltage", "Its effective voltage.", "120 kV", {"least": -1e10, "most": 1e10}),
-        ("frequency", "frequency", "Its frequency.", "200 MHz", {"above": 0.0, "most": 1e12}),
+        ("frequency", "frequency", "Its frequency.", "200 MHz", {"least": 1e-3, "most": 1e12}),
         ("phase", "angle", "Its phase at the passage of the centre.", "-90 deg", {"least": -100.0, "most": 100.0}),
     ),
 )

@@ -71,7 +71,7 @@ def test_without_company():
         ("{count: 5}", "bunch.train.spacing: is missing; write one such as 'spacing: 3 ns'"),
         ("{count: 5, spacing: 3}", "bunch.train.spacing: '3' has no unit; write '3 m' or '3 ns'"),
         ("{count: 5, spacing: 3 ns rms}", "bunch.train.spacing: '3 ns rms': 'rms' does not go with a distance"),
-        ("{count: 5, spacing: -3 ns}", "bunch.train.spacing: '-3 ns' is outside what is allowed: above 0 m"),
+        ("{count: 5, spacing: -3 ns}", "bunch.train.spacing: '-3 ns' is outside what is allowed: at least 1e-09 m"),
         ("{count: 0, spacing: 3 m}", "bunch.train.count: '0' is outside what is allowed: at least 1, at most 1000"),
         ("{count: 2, spacing: 3 m, place: 3}", "bunch.train: a train of 2 has no bunch number 3"),
         ("{count: 2, spacing: 3 m, gap: 1 m}", "bunch.train: 'gap' is no key of 'bunch.train'"),
@@ -105,7 +105,7 @@ def test_a_train_in_a_ring():
             ("intensity: 2 nC", "intensity: 2 mA mean"),
             "other_bunch.intensity: '2 mA mean': the mean current of bunches",
         ),
-        (("y: 40 mm}", "y: 0 mm}"), "other_bunch.beta.y: '0 mm' is outside what is allowed: above 0 m"),
+        (("y: 40 mm}", "y: 0 mm}"), "other_bunch.beta.y: '0 mm' is outside what is allowed: at least 1e-06 m"),
         ((", y: 40 mm}", "}"), "other_bunch.beta.y: is missing"),
         (("x: 0.1 mm", "x: 0.1"), "other_bunch.offset.x: '0.1' has no unit"),
         (

@@ -39,7 +39,7 @@ ONE_LINE = [  # what is changed; the key, its place, what is said
         "8:14",
         "is missing; the emittances x and y come together",
     ),
-    ([("tune: {x: 4.2,", "tune: {x: 0,")], "ring.tune.x", "16:13", f"'0' {OUTSIDE}: above 0, at most 10000"),
+    ([("tune: {x: 4.2,", "tune: {x: 0,")], "ring.tune.x", "16:13", f"'0' {OUTSIDE}: at least 0.001, at most 10000"),
     ([("bunches: 1", "bunches: 1.5")], "ring.bunches", "17:12", "'1.5' is not a whole number"),
     ([("bunches: 1", "bunches: 0")], "ring.bunches", "17:12", f"'0' {OUTSIDE}: at least 1, at most 1000000"),
     (
@@ -70,7 +70,7 @@ ONE_LINE = [  # what is changed; the key, its place, what is said
         [("poles: {half_gap: 70 mm}", "cathode: {at: 0 m}")],
         "surroundings.cathode.at",
         "12:17",
-        f"'0 m' {OUTSIDE}: above 0 m, at most 1000 m",
+        f"'0 m' {OUTSIDE}: at least 1e-09 m, at most 1000 m",
     ),
     (
         [("x: 6.1 mm rms", "x: 6.1 mm full")],
