@@ -22,7 +22,12 @@ _SURROUNDINGS = (
     Key("surroundings.cathode", "section", "A conducting plane across the axis behind the bunch."),
     Key("surroundings.cathode.at", "length", "Its distance behind the centre.", "2 mm", required=True, **_GAP),
     Key(
-        "surroundings.cathode.field", "electric field", "The field that draws from it.", "40 MV/m", least=1e-3, most=1e11
+        "surroundings.cathode.field",
+        "electric field",
+        "The field that draws from it.",
+        "40 MV/m",
+        least=1e-3,
+        most=1e11,
     ),
     Key(
         "surroundings.neutralisation",

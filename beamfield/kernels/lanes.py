@@ -37,7 +37,11 @@ def _vectors(loop, result=types.void):
 
 
 def _argument(context, builder, kind, value):
-    return _Rows(builder, context.make_array(kind)(context, builder, value).data) if isinstance(kind, types.Array) else value
+    return (
+        _Rows(builder, context.make_array(kind)(context, builder, value).data)
+        if isinstance(kind, types.Array)
+        else value
+    )
 
 
 class _Rows:

@@ -52,7 +52,9 @@ def from_children(child, sheets, sheet, tables, moments, out):
     powers(x, tables.power, tables.inverse, tables.fold, t)
     for b in range(2):
         for i in range(tables.convolve.shape[0]):
-            wide[tables.convolve[i, 0]] += moments[child + b, tables.convolve[i, 1]] * t[tables.convolve[i, 2] + np.uint64(b)]
+            wide[tables.convolve[i, 0]] += (
+                moments[child + b, tables.convolve[i, 1]] * t[tables.convolve[i, 2] + np.uint64(b)]
+            )
     for i in range(tables.moments):
         wide[tables.unfold[i, 1]] -= wide[tables.unfold[i, 0]]
         wide[tables.unfold[i, 2]] -= wide[tables.unfold[i, 0]]

@@ -19,10 +19,11 @@ from typing import NamedTuple
 import numpy as np
 from numba import get_num_threads
 
+from beamfield.kernels.acceptance import accepted, distance2, is_apart, is_loose
 from beamfield.kernels.cells import longer
 from beamfield.kernels.compiled import compiled, inner
 from beamfield.kernels.expansion import STEP
-from beamfield.kernels.extent import COUNT, RADIUS, SIZE, STRENGTH, power
+from beamfield.kernels.extent import COUNT, RADIUS, SIZE, STRENGTH
 from beamfield.kernels.lanes import LANES
 from beamfield.kernels.local_field import (
     bench,
@@ -36,8 +37,6 @@ from beamfield.kernels.local_field import (
 )
 from beamfield.kernels.near_field import BLOCK, add_near
 
-TOUCH = 1.2  # radii of two far cells together, at most, over their distance
-LARGE = 2.0  # ratio of the sizes of two cells of which one is large beside the other
 TASKS, CELLS = 512, 400  # tasks at most; cells to a task, on average, at least
 SHARES = 16  # of the tasks to a thread
 BUFFER = 1024  # cells that are collected before they are summed
@@ -114,7 +113,11 @@ def walk_task(target, source, tables, rules, task, field):
     begin = np.zeros(depth + 1, np.int64)  # where the open cells of each level begin
     begin[1] = 1
     opened = np.zeros(256, np.int64)
-    stack, near, apart = np.zeros(source.tree.level.shape[0] + 2, np.int64), np.zeros(BUFFER, np.int64), np.zeros(BUFFER, np.int64)
+    stack, near, apart = (
+        np.zeros(source.tree.level.shape[0] + 2, np.int64),
+        np.zeros(BUFFER, np.int64),
+        np.zeros(BUFFER, np.int64),
+    )
     path = path_to(target.tree.parent, task)
     todo, level = np.zeros(2 * depth, np.int64), np.zeros(2 * depth, np.int64)
     count = 1
@@ -212,60 +215,7 @@ def sort_out(target, source, tables, rules, a, d, work, begin, opened, stack, ne
 
 
 @inner
-def distance2(sheet, other):
-    x, y, z = sheet[0] - other[0], sheet[1] - other[1], sheet[2] - other[2]
-    return x * x + y * y + z * z
-
-
-@inner
-def accepted(size, radius, r2, charge, rules):
-    """Whether an expansion is good enough at squared distance r2 = R^2, for cells whose sizes and radii add up to these.
-
-    The first order that is dropped is of relative size e = sum_k (p over k) <s_B^k> <s_A^{p-k}> / R^p, the s the distances of
-    places from the centre of their cell (W. Dehnen, Comput. Astrophys. Cosmol. 1:1 (2014), from memory); by Hoelder's
-    inequality e <= (size / R)^p. The field itself is f = charge / (R^2 F) of the typical one, F. Demanded is
-
-        e sqrt(f) < tolerance:
-
-    strong sources are taken more exactly than weak ones, since many errors add up at random. Radii must not reach far over
-    the distance, so that the series converges; with a cloud, R^2 + a^2 stands for R^2, as its singularity is there.
-    """
-    r2 += rules.cloud2
-    if not radius * radius < TOUCH * TOUCH * r2:
-        return False
-    return power(size * size / r2, rules.order) * charge < rules.limit * r2
-
-
-@inner
-def is_apart(places, low, high, sheet, other, rules):
-    """Whether a far expansion of cell B is good, and worth while, at each place of the leaf A."""
-    if other[COUNT] <= rules.ranked or not sheet[SIZE] > LARGE * other[SIZE]:
-        return False
-    return accepted(other[SIZE], other[RADIUS], nearest2(places, low, high, other), other[STRENGTH], rules)
-
-
-@inner
-def is_loose(places, low, high, sheet, other, rules):
-    """Whether each charge of the leaf B alone is far from the cell A, and worth while."""
-    if sheet[COUNT] <= rules.pairs or not other[SIZE] > LARGE * sheet[SIZE]:
-        return False
-    return accepted(sheet[SIZE], sheet[RADIUS], nearest2(places, low, high, sheet), other[STRENGTH], rules)
-
-
-@inner
-def nearest2(places, low, high, sheet):
-    """Squared distance of the nearest of some places from the centre of a cell."""
-    nearest = np.inf
-    for i in range(low, high):
-        x, y, z = places[0, i] - sheet[0], places[1, i] - sheet[1], places[2, i] - sheet[2]
-        nearest = min(nearest, x * x + y * y + z * z)
-    return nearest
-
-
-@inner
 def add_apart(target, source, tables, rules, low, high, cells, count, work, field):
     for i in range(count):
         b = cells[i]
-        field_of_cell(
-            work, tables, source.sheets[b], source.moments[b], target.places, low, high, rules.cloud2, field
-        )
+        field_of_cell(work, tables, source.sheets[b], source.moments[b], target.places, low, high, rules.cloud2, field)

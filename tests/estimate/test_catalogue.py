@@ -4,7 +4,25 @@ import pytest
 
 from beamfield.estimate.catalogue import CATALOGUE, QUESTIONS
 
-UNITS = {"1", "C", "A", "m", "V", "ohm", "deg", "1/m", "1/m2", "V/m", "V/m2", "T m", "eV/c", "eV/m", "eV", "rad", "rad/m"}
+UNITS = {
+    "1",
+    "C",
+    "A",
+    "m",
+    "V",
+    "ohm",
+    "deg",
+    "1/m",
+    "1/m2",
+    "V/m",
+    "V/m2",
+    "T m",
+    "eV/c",
+    "eV/m",
+    "eV",
+    "rad",
+    "rad/m",
+}
 NEEDS = {"bunch", "ring", "emittance", "walls", "density", "train", "encounter", "opposing", "aside", "beta"}
 NEEDS |= {"momentum_spread", "rf", "chamber", "chamber or ends", "chamber or slopes", "cathode"}
 FIRST = [

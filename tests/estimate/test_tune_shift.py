@@ -166,11 +166,14 @@ def test_great_shifts_are_marked():
     assert "first order" in great.remarks[-1]
 
 
-def test_neutralisation_is_named():
-    """The value is the bunch's own; where there is a background the page has to say that it is not in it."""
-    found = shift(ring_bunch(), "x", surroundings=Surroundings(neutralisation=0.1))
-    assert found.value == shift(ring_bunch(), "x").value
-    assert "background" in found.remarks[0]
+def test_neutralisation():
+    """J. D. Lawson, J. Electron. Control 5, 146 (1958), its abstract: 1 - gamma^2 f of the force is left, and is named."""
+    fraction, own = 0.1, shift(ring_bunch(), "x")
+    found = shift(ring_bunch(), "x", surroundings=Surroundings(neutralisation=fraction))
+    left = 1.0 - gamma_of(160e6) ** 2 * fraction
+    for value, whole in ((found.value, own.value), (found.closed_form, own.closed_form), (found.doubt, own.doubt)):
+        assert value == pytest.approx(left * whole, rel=SAME, abs=0.0)
+    assert "f = 1/gamma^2" in found.remarks[0]
 
 
 def test_closed_form_road():
