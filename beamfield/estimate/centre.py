@@ -52,10 +52,11 @@ def smooth_slopes(field, sigma, axes=(0, 1, 2)):
     return np.array([own @ np.linalg.pinv(steps ** np.array(powers)[:, None])[:, 0] for powers in ([1], [1, 3])])
 
 
-def peak_place(along, sigma, edge, cusp=False):
+def peak_place(along, sigma, edge, cusp=False, rounds=ROUNDS):
     """Distance [m] from the centre at which abs(along(places)) is largest, along one axis.
 
-    edge, half extent or None; cusp, True where the density ends there at once.
+    edge, half extent or None; cusp, True where the density ends there at once; rounds of refinement, each four times
+    finer.
 
     A first row of places, then ever finer rows about the best of them; where a cusp is the best it is the place.
     """
@@ -65,7 +66,7 @@ def peak_place(along, sigma, edge, cusp=False):
     best, step = _best(along, places), places[0]
     if cusp and best == edge:
         return best
-    for _ in range(ROUNDS):
+    for _ in range(rounds):
         best = _best(along, best + np.linspace(-step, step, ZOOM))
         step *= 2.0 / (ZOOM - 1)
     return best

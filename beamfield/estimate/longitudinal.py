@@ -1,6 +1,7 @@
 """How deep is the potential of the bunch, and how strongly does it push itself along inside its chamber?"""
 
 from dataclasses import replace
+from functools import partial
 
 import numpy as np
 
@@ -16,6 +17,9 @@ from beamfield.laws.line_shape import line_curvature
 NEUTRALISED = "the neutralising background is not in this value"
 STRAYED = 0.1  # relative difference from the long beam beyond which one g no longer says it all
 _ELLIPSOID_LINES = {"uniform": "parabolic", "parabolic": "squared"}
+
+
+WALL_ROUNDS = 3  # of the search for the strongest field with a wall: 1e-6 of its value, at a third of the time
 
 
 def longitudinal(bunch, surroundings, ring, numerics):
@@ -122,7 +126,8 @@ def _impedance(bunch, factor):
 
 def _energy_per_turn(bunch, surroundings, ring, numerics, wall, remarks):
     unit = abs(bunch.species.charge) / ELEMENTARY_CHARGE * ring.circumference
-    place = peak_place(lambda places: closed_along(bunch, surroundings, places), bunch.sigma[2], bunch.extent(2))
+    along = partial(closed_along, bunch, surroundings)
+    place = peak_place(along, bunch.sigma[2], bunch.extent(2), rounds=WALL_ROUNDS)
     field = asked_of_axis(bunch, surroundings, numerics, np.array([place]), lambda values: abs(values[0]))
     found = field.times(unit)
     unsure = wall.remarks if wall else ()
