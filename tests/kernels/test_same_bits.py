@@ -25,7 +25,7 @@ SCALES, GAMMA = (1.0, 2.0, 3.0), 4.0
 
 def turned(out):
     angles, weights = np.empty((2, POINTS, 16))
-    azimuths(PROBES[0], PROBES[1], 0.7, 0.6, True, angles, weights)
+    azimuths(PROBES[0], PROBES[1], 0.7, 0.6, True, 6.5, angles, weights)
     out[: POINTS * 16], out[POINTS * 16 :] = angles.ravel(), weights.ravel()
 
 
